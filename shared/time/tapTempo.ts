@@ -49,7 +49,7 @@ interface Line {
 }
 
 /** Ordinary least squares of time over beat number. */
-const fit = (points: readonly Point[]): Line => {
+const lineThrough = (points: readonly Point[]): Line => {
   const n = points.length;
   const meanBeat = points.reduce((sum, point) => sum + point.beat, 0) / n;
   const meanT = points.reduce((sum, point) => sum + point.t, 0) / n;
@@ -77,11 +77,11 @@ const number = (taps: readonly number[], period: number): Point[] => {
 
 /** The line without the taps that lie off it; falls back to all when too few would be left. */
 const fitWithout = (points: readonly Point[], period: number): Line => {
-  const first = fit(points);
+  const first = lineThrough(points);
   const good = points.filter(
     ({ beat, t }) => Math.abs(t - first.origin - first.period * beat) <= outlierShare * period,
   );
-  return good.length >= 3 && good.length < points.length ? fit(good) : first;
+  return good.length >= 3 && good.length < points.length ? lineThrough(good) : first;
 };
 
 /** A hand on the edge of the range is not folded away from it, beats a minute. */
