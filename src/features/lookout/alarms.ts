@@ -38,7 +38,10 @@ interface Known {
   now: number;
 }
 
-type Check = (status: DisplayStatus, now: number) => Omit<Alarm, 'key' | 'displayId' | 'screenIds'> & { kind: string } | null;
+type Check = (
+  status: DisplayStatus,
+  now: number,
+) => (Omit<Alarm, 'key' | 'displayId' | 'screenIds'> & { kind: string }) | null;
 
 const seconds = (ms: number): string => {
   const whole = Math.max(0, Math.floor(ms / 1000));
@@ -49,7 +52,12 @@ const seconds = (ms: number): string => {
 const checks: Check[] = [
   (status, now) =>
     status.lastSeenAt === null
-      ? { kind: 'never', severity: 'look', what: 'has not been seen since the hub started', mend: 'Open /display on its machine.' }
+      ? {
+          kind: 'never',
+          severity: 'look',
+          what: 'has not been seen since the hub started',
+          mend: 'Open /display on its machine.',
+        }
       : !status.connected || now - status.lastSeenAt > alarmLimits.lost
         ? {
             kind: 'lost',
@@ -69,9 +77,17 @@ const checks: Check[] = [
       : null,
   ({ vitals, changedAt }, now) =>
     vitals && !vitals.still && changedAt !== null && now - changedAt > alarmLimits.stands
-      ? { kind: 'stands', severity: 'broken', what: `stands still for ${seconds(now - changedAt)}`, mend: 'Reload it.' }
+      ? {
+          kind: 'stands',
+          severity: 'broken',
+          what: `stands still for ${seconds(now - changedAt)}`,
+          mend: 'Reload it.',
+        }
       : null,
-  ({ vitals }) => (vitals?.trouble ? { kind: 'trouble', severity: 'look', what: `says: ${vitals.trouble}`, mend: 'Reload it if it stays.' } : null),
+  ({ vitals }) =>
+    vitals?.trouble
+      ? { kind: 'trouble', severity: 'look', what: `says: ${vitals.trouble}`, mend: 'Reload it if it stays.' }
+      : null,
   ({ vitals }) =>
     vitals && vitals.filesOnBoard < vitals.filesWanted
       ? {
@@ -105,12 +121,16 @@ const order: Record<Severity, number> = { broken: 0, look: 1 };
 
 /** Area of all screens an alarm touches, m²: what more of the room sees comes first. */
 const area = (alarm: Alarm, screens: readonly Screen[]): number =>
-  screens.filter((screen) => alarm.screenIds.includes(screen.id)).reduce((sum, screen) => sum + screen.width * screen.height, 0);
+  screens
+    .filter((screen) => alarm.screenIds.includes(screen.id))
+    .reduce((sum, screen) => sum + screen.width * screen.height, 0);
 
 /** What is wrong now, worst and largest first. Simulated displays are left out. Pure. */
 export const alarmsOf = ({ displays, names, maps, screens, now }: Known): Alarm[] => {
   const real = displays.filter((status) => !status.simulated);
-  const screensOf = (id: string): string[] => [...new Set((maps[id]?.regions ?? []).map((region) => region.screenId))];
+  const screensOf = (id: string): string[] => [
+    ...new Set((maps[id]?.regions ?? []).map((region) => region.screenId)),
+  ];
   const ofDisplays = real.flatMap((status): Alarm[] => {
     for (const check of checks) {
       const found = check(status, now);
@@ -118,7 +138,13 @@ export const alarmsOf = ({ displays, names, maps, screens, now }: Known): Alarm[
       const { kind, what, ...rest } = found;
       const name = names[status.displayId] ?? 'A display';
       return [
-        { ...rest, key: `${kind} ${status.displayId}`, displayId: status.displayId, what: `${name} ${what}`, screenIds: screensOf(status.displayId) },
+        {
+          ...rest,
+          key: `${kind} ${status.displayId}`,
+          displayId: status.displayId,
+          what: `${name} ${what}`,
+          screenIds: screensOf(status.displayId),
+        },
       ];
     }
     return [];
@@ -137,6 +163,9 @@ export const alarmsOf = ({ displays, names, maps, screens, now }: Known): Alarm[
       }),
     );
   return [...ofDisplays, ...bare].sort(
-    (a, b) => order[a.severity] - order[b.severity] || area(b, screens) - area(a, screens) || a.key.localeCompare(b.key),
+    (a, b) =>
+      order[a.severity] - order[b.severity] ||
+      area(b, screens) - area(a, screens) ||
+      a.key.localeCompare(b.key),
   );
 };

@@ -50,7 +50,11 @@ export const redo = (history: MapHistory): MapHistory => {
 };
 
 /** What is shown is what is kept. */
-export const markSaved = (history: MapHistory, map: OutputMap): MapHistory => ({ ...history, saved: map, grip: null });
+export const markSaved = (history: MapHistory, map: OutputMap): MapHistory => ({
+  ...history,
+  saved: map,
+  grip: null,
+});
 
 export const isUnsaved = (history: MapHistory): boolean =>
   history.present !== history.saved && JSON.stringify(history.present) !== JSON.stringify(history.saved);
