@@ -16,13 +16,20 @@ export async function makeTemplate(migrate: Migrate): Promise<() => Promise<void
   const admin = process.env.DATABASE_URL ?? own?.cluster.url ?? '';
   const template = `template_${process.pid}_${process.hrtime.bigint().toString(36)}`;
   process.env.LAMPYRID_TEST_ADMIN = admin;
-  await createDatabase(admin, template);
-  await migrate(withDatabase(admin, template));
   process.env.LAMPYRID_TEST_TEMPLATE = template;
-  return async () => {
+  const remove = async () => {
     await dropDatabase(admin, template);
     await own?.remove();
   };
+  try {
+    await createDatabase(admin, template);
+    await migrate(withDatabase(admin, template));
+  } catch (error) {
+    await remove();
+    // Its message alone: the whole error repeats every statement several times.
+    throw new Error(`The tests' database could not be made: ${error instanceof Error ? error.message : error}`);
+  }
+  return remove;
 }
 
 /** A server that forgets: a test's data needn't outlive a power cut, so nothing is synced to the disk. */
