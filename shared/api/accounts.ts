@@ -61,6 +61,7 @@ export const invitationDetailsSchema = z.object({
   email: z.string(),
   role: roleSchema,
 });
+export type InvitationDetails = z.infer<typeof invitationDetailsSchema>;
 export const acceptSchema = z.object({ token: tokenSchema, name: nameSchema, password: passwordSchema });
 
 export const memberSchema = userSchema.extend({ lastSignInAt: z.string().nullable() });
