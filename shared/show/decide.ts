@@ -144,9 +144,7 @@ const deciders: Deciders = {
       happens({ kind: 'dial.changed', screenIds, dial, value }),
     ),
   'lineup.set': (_state, { displayId, on }, { displays }) =>
-    known([displayId], displays, 'unknown-display', () =>
-      happens({ kind: 'lineup.changed', displayId, on }),
-    ),
+    known([displayId], displays, 'unknown-display', () => happens({ kind: 'lineup.changed', displayId, on })),
   'display.identify': (_state, { displayId }, { displays, now }) =>
     known([displayId], displays, 'unknown-display', () =>
       happens({ kind: 'display.identified', displayId, until: now + identifyMs }),
