@@ -1,5 +1,6 @@
 import { useCallback, useRef, useState } from 'react';
 import type { CommandBody } from '#shared/show/commands';
+import { notSentWords } from '#shared/show/words';
 import { vibrate } from '@/inputs/vibrate';
 import type { ShowLink } from '@/link/types';
 import { refusalFor } from './refusals';
@@ -7,7 +8,6 @@ import type { Notice } from './useNotice';
 
 /** A press that the hub has not taken within this is given up: it was not sent and never fires, ms. */
 const pressExpiryMs = 1000;
-export const notSentWords = 'No link, not sent';
 
 export interface Sender {
   /** Sends one command. `key` names what is waiting for the answer; it is in `asking` until then. */
@@ -40,7 +40,7 @@ export const useSend = (link: ShowLink, tell: (kind: Notice['kind'], words: stri
         return false;
       }
       if (status !== 'on') {
-        tell('not-sent', notSentWords);
+        tell('not-sent', notSentWords.noLink);
         return false;
       }
       if (!quiet) vibrate('tap');

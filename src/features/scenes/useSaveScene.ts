@@ -1,0 +1,48 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import type { Scene } from '#shared/scene/schema';
+import { api, ProblemError } from '@/lib/api';
+import { queryKeys } from '@/lib/queryKeys';
+import type { Draft, SceneEditor } from './useSceneEditor';
+
+/** Saving, taking what another saved, going back to a version, and saving as a copy. */
+export const useSaveScene = (scene: Scene, editor: SceneEditor) => {
+  const client = useQueryClient();
+  const fresh = async () => {
+    await client.invalidateQueries({ queryKey: queryKeys.scenes(scene.showId) });
+    await client.invalidateQueries({ queryKey: queryKeys.sceneVersions(scene.id) });
+  };
+  const save = useMutation({
+    mutationFn: (draft: Draft) =>
+      api.put<Scene>(`/api/scenes/${scene.id}`, { ...draft, expectedVersion: editor.version }),
+    onSuccess: async (saved, draft) => {
+      editor.markSaved(draft, saved.version);
+      client.setQueryData(queryKeys.scene(scene.id), saved);
+      await fresh();
+    },
+  });
+  const theirs = useMutation({
+    mutationFn: () => api.get<Scene>(`/api/scenes/${scene.id}`),
+    onSuccess: (next) => {
+      editor.load(next);
+      save.reset();
+    },
+  });
+  const copy = useMutation({
+    mutationFn: (draft: Draft) =>
+      api.post<Scene>(`/api/shows/${scene.showId}/scenes`, {
+        ...draft,
+        name: `${draft.name} (copy)`.slice(0, 60),
+      }),
+    onSuccess: async (_made, draft) => {
+      editor.markSaved(draft, editor.version);
+      save.reset();
+      await fresh();
+    },
+  });
+  const take = useMutation({
+    mutationFn: (version: number) => api.get<Scene>(`/api/scenes/${scene.id}/versions/${version}`),
+    onSuccess: (old) => editor.editBody(old.body),
+  });
+  const conflict = save.error instanceof ProblemError && save.error.status === 409 ? save.error : null;
+  return { save, theirs, copy, take, conflict };
+};

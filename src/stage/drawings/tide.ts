@@ -1,0 +1,21 @@
+/** A slow swell under a low light. Nothing in it is quick: this is the calm look. */
+export const tide = `
+vec3 draw(vec2 p, float aspect) {
+  float t = TIME * 0.06;
+  vec3 colour = mix(P0, P1, smoothstep(0.5, -0.4, p.y));
+  for (int i = 0; i < 6; i++) {
+    float k = float(i);
+    float far = k / 5.0;
+    float base = 0.28 - 0.15 * k;
+    float tall = (0.03 + 0.09 * A) * (0.4 + far);
+    float x = p.x * (2.2 - 1.2 * far) + SEED + k * 2.7;
+    float crest = base + tall * (sin(x * 1.7 + t * (2.0 + k)) + 0.5 * sin(x * 3.1 - t * (1.4 + k)) + 0.6 * (noise(vec2(x * 1.4, t + k)) - 0.5));
+    float under = edge(0.0, crest - p.y);
+    float below = clamp((crest - p.y) / 0.3, 0.0, 1.0);
+    vec3 water = mix(mix(P2, P3, 0.25 * B), P1 * 0.5, pow(below, 0.6)) * (0.35 + 0.65 * far);
+    float glint = exp(-below * 26.0) * (0.25 + 0.75 * noise(vec2(x * 5.0 + t * 3.0, k)));
+    water += P3 * glint * B * 0.55;
+    colour = mix(colour, water, under);
+  }
+  return colour;
+}`;
