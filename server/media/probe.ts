@@ -15,7 +15,8 @@ export interface VideoFacts {
 }
 
 /** Demuxers that may be opened; no playlist, no network, no script of files. */
-export const formatWhitelist = 'mov,mp4,matroska,webm,avi,mpegts,mpeg,mpegvideo,gif,image2,flv,asf,ogg,mxf,dv,m4v,3gp';
+export const formatWhitelist =
+  'mov,mp4,matroska,webm,avi,mpegts,mpeg,mpegvideo,gif,image2,flv,asf,ogg,mxf,dv,m4v,3gp';
 
 /** Guards before each input: only local files, only known formats, bounded pictures. */
 export const inputGuards = (path: string): string[] => [
@@ -58,11 +59,14 @@ const probeLimitMs = 20_000;
 export const factsOf = (json: string): VideoFacts => {
   const parsed = answerSchema.safeParse(JSON.parse(json || '{}'));
   const stream = parsed.data?.streams.find((one) => one.codec_type === 'video');
-  if (!stream || stream.width < 2 || stream.height < 2) throw new MediaFault('There is no picture in this file.');
+  if (!stream || stream.width < 2 || stream.height < 2)
+    throw new MediaFault('There is no picture in this file.');
   const durationS = stream.duration ?? parsed.data?.format?.duration ?? 0;
   if (!(durationS > 0)) throw new MediaFault('This file has no length: export it anew as MP4.');
-  if (durationS > uploadLimits.seconds) throw new MediaFault('This video is longer than 30 minutes: cut it first.');
-  const turn = stream.side_data_list.find((side) => side.rotation !== undefined)?.rotation ?? stream.tags.rotate ?? 0;
+  if (durationS > uploadLimits.seconds)
+    throw new MediaFault('This video is longer than 30 minutes: cut it first.');
+  const turn =
+    stream.side_data_list.find((side) => side.rotation !== undefined)?.rotation ?? stream.tags.rotate ?? 0;
   const lying = Math.abs(turn) % 180 === 90;
   return {
     width: lying ? stream.height : stream.width,
@@ -76,7 +80,15 @@ export const factsOf = (json: string): VideoFacts => {
 
 /** Probes a video file. Throws a MediaFault with a plain sentence. */
 export const probe = async (path: string): Promise<VideoFacts> => {
-  const args = ['-v', 'error', '-print_format', 'json', '-show_format', '-show_streams', ...inputGuards(path)];
+  const args = [
+    '-v',
+    'error',
+    '-print_format',
+    'json',
+    '-show_format',
+    '-show_streams',
+    ...inputGuards(path),
+  ];
   const { code, stdout, stderr, ended } = await run('ffprobe', args, { limitMs: probeLimitMs });
   if (ended === 'time') throw new MediaFault('This file takes too long to read: export it anew as MP4.');
   if (code !== 0) throw faultOf(stderr);

@@ -28,7 +28,8 @@ const looksLikeText = (head: Buffer): boolean => head.every((byte) => byte >= 9 
 export const sniffBytes = async (head: Buffer): Promise<Sniffed> => {
   if (head.length === 0) throw new MediaFault('This file is empty: upload it again.');
   const text = head.toString('utf8');
-  if (/^\s*#EXTM3U|^\s*ffconcat/.test(text)) throw new MediaFault('This is a playlist, not a video: upload the video itself.');
+  if (/^\s*#EXTM3U|^\s*ffconcat/.test(text))
+    throw new MediaFault('This is a playlist, not a video: upload the video itself.');
   const type = await fileTypeFromBuffer(head);
   if (type && pictures.has(type.mime)) return { what: 'picture', mime: type.mime };
   if (type?.mime.startsWith('video/')) return { what: 'video', mime: type.mime };
@@ -36,7 +37,11 @@ export const sniffBytes = async (head: Buffer): Promise<Sniffed> => {
   if (type?.mime.startsWith('image/hei'))
     throw new MediaFault('This is a HEIC picture: set the phone to “most compatible”, or export it as JPEG.');
   if (type) throw new MediaFault(`Not a picture or a video: it is ${type.ext.toUpperCase()}.`);
-  throw new MediaFault(looksLikeText(head) ? 'Not a picture or a video: it is text.' : 'Not a picture or a video that can be read here.');
+  throw new MediaFault(
+    looksLikeText(head)
+      ? 'Not a picture or a video: it is text.'
+      : 'Not a picture or a video that can be read here.',
+  );
 };
 
 /** The same for a file on disk. */

@@ -25,7 +25,8 @@ export const steadyFps = (fps: number): number =>
   fps > mezzanine.maxFps ? (fps % 25 < 1 ? 25 : 30) : Math.max(1, Math.round(fps * 1000) / 1000);
 
 /** HDR to standard range: linear light, Hable's curve, BT.709. Without it phone video looks grey. */
-const toneMap = 'zscale=t=linear:npl=100,format=gbrpf32le,zscale=p=bt709,tonemap=hable:desat=0,zscale=t=bt709:m=bt709:r=tv';
+const toneMap =
+  'zscale=t=linear:npl=100,format=gbrpf32le,zscale=p=bt709,tonemap=hable:desat=0,zscale=t=bt709:m=bt709:r=tv';
 
 /**
  * Arguments of ffmpeg for one clip: H.264 yuv420p, short closed groups, no B frames, constant rate, silent, nothing
@@ -34,14 +35,28 @@ const toneMap = 'zscale=t=linear:npl=100,format=gbrpf32le,zscale=p=bt709,tonemap
  */
 export const transcodeArgs = (from: string, to: string, facts: VideoFacts, threads: number): string[] => {
   const [width, height] = fitSize(facts);
-  const filters = [...(facts.hdr ? [toneMap] : []), `scale=${width}:${height}:flags=lanczos`, 'setsar=1', 'format=yuv420p'];
+  const filters = [
+    ...(facts.hdr ? [toneMap] : []),
+    `scale=${width}:${height}:flags=lanczos`,
+    'setsar=1',
+    'format=yuv420p',
+  ];
   return [
     ...['-v', 'error', '-nostdin', '-y', '-threads', String(threads)],
     ...inputGuards(from),
     ...['-map', '0:v:0', '-an', '-sn', '-dn', '-map_metadata', '-1', '-map_chapters', '-1'],
     ...['-vf', filters.join(','), '-r', String(steadyFps(facts.fps)), '-fps_mode', 'cfr'],
     ...['-c:v', 'libx264', '-preset', 'veryfast', '-crf', String(mezzanine.crf), '-threads', String(threads)],
-    ...['-g', String(mezzanine.keyEach), '-keyint_min', String(mezzanine.keyEach), '-sc_threshold', '0', '-bf', '0'],
+    ...[
+      '-g',
+      String(mezzanine.keyEach),
+      '-keyint_min',
+      String(mezzanine.keyEach),
+      '-sc_threshold',
+      '0',
+      '-bf',
+      '0',
+    ],
     ...['-flags', '+cgop', '-movflags', '+faststart', '-progress', 'pipe:1', '-f', 'mp4', to],
   ];
 };
@@ -56,5 +71,15 @@ export const secondsDone = (line: string): number | null => {
 export const posterArgs = (from: string, to: string, facts: VideoFacts): string[] => [
   ...['-v', 'error', '-nostdin', '-y', '-ss', String(facts.durationS / 10)],
   ...inputGuards(from),
-  ...['-frames:v', '1', '-vf', 'scale=w=640:h=640:force_original_aspect_ratio=decrease', '-f', 'image2', '-c:v', 'png', to],
+  ...[
+    '-frames:v',
+    '1',
+    '-vf',
+    'scale=w=640:h=640:force_original_aspect_ratio=decrease',
+    '-f',
+    'image2',
+    '-c:v',
+    'png',
+    to,
+  ],
 ];
