@@ -31,7 +31,7 @@ export function makeApp(parts: AppParts): Express {
   app.use(hostGuard(parts.hosts));
   app.get('/healthz', (_request, response) => {
     response.setHeader('cache-control', 'no-store');
-    response.json({ up: true });
+    response.json({ name: 'lampyrid', up: true });
   });
   app.use(['/api', '/media'], noStore, writeGuard(parts.hosts), express.json({ limit: '1mb' }));
   app.use(['/api', '/media'], parts.sessions, identify(parts.db));

@@ -4,7 +4,7 @@ import { z } from 'zod';
 const schema = z.object({
   NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),
   DATABASE_URL: z.string().min(1, 'Address of a PostgreSQL database.'),
-  PORT: z.coerce.number().int().min(0).max(65535).default(4100),
+  PORT: z.coerce.number().int().min(0).max(65535).default(4646),
   HOST: z.string().default('127.0.0.1'),
   LAMPYRID_DATA: z.string().min(1).default('.data'),
   /** `offer`: the set-up page offers the demo night. `open`: crew, lead and demo night are made by themselves. */

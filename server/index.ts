@@ -9,7 +9,7 @@ import { demoTools } from './media/demoMedia';
 import { startMedia } from './media/startMedia';
 import { connect, type Database } from './models/database';
 import { migrate } from './models/migrate';
-import { type HostRule, hostRule, originAllowed } from './origins';
+import { type HostRule, hostRule, networkAddresses, originAllowed } from './origins';
 import { accountRoutes } from './routes/accounts';
 import { assetRoutes } from './routes/assets';
 import { brandRoutes } from './routes/brands';
@@ -33,6 +33,9 @@ import { sessionSecret } from './services/sessionCookie';
 import { anyShowLive } from './services/shows/live';
 import { authorizeSocket } from './services/socketCaller';
 
+/** A phone on a venue's network may take this long for one large clip, ms. */
+const longestUploadMs = 3_600_000;
+
 /** Brings up one server and says so to whoever started it. */
 async function main(): Promise<void> {
   const config = readConfig(process.env);
@@ -42,7 +45,11 @@ async function main(): Promise<void> {
   mkdirSync(config.dataFolder, { recursive: true });
   await migrate(config.databaseUrl);
   const db = connect(config.databaseUrl);
-  const http = createServer({ headersTimeout: 5000, requestTimeout: 0, connectionsCheckingInterval: 1000 });
+  const http = createServer({
+    headersTimeout: 5000,
+    requestTimeout: longestUploadMs,
+    connectionsCheckingInterval: 1000,
+  });
   const hosts = hostRule(() => (http.address() as AddressInfo | null)?.port ?? config.port, config.publicUrl);
   const parts = await makeParts(config, log, db, hosts);
   http.on('request', parts.app);
@@ -136,9 +143,21 @@ async function welcome(
   context: RouteContext,
   address: string,
 ): Promise<{ setUpUrl?: string; lines?: string[] }> {
-  if (config.demo === 'open') return { lines: await openDemo(db, context.demo, config.demoPassword) };
+  if (config.demo === 'open') {
+    const lines = await openDemo(db, context.demo, config.demoPassword);
+    return { lines: [...lines, ...networkLines(config, address)] };
+  }
   const token = await setUpLink(db);
-  return token ? { setUpUrl: `${address}/setup#${token}` } : {};
+  const lines = networkLines(config, address);
+  return token ? { setUpUrl: `${address}/setup#${token}`, lines } : { lines };
+}
+
+/** How phones and other machines reach us, and what they lose on a plain network. */
+function networkLines(config: Config, address: string): string[] {
+  if (config.host !== '0.0.0.0') return [];
+  const port = new URL(address).port;
+  const addresses = networkAddresses().map((one) => `On the network: http://${one}:${port}`);
+  return [...addresses, 'The network hears passwords in the clear: use one of your own, not the guests’.'];
 }
 
 function listen(http: Server, config: Config): Promise<void> {

@@ -8,6 +8,12 @@ export interface HostRule {
   socketOrigins: () => string[];
 }
 
+/** Addresses by which other machines on the network reach this one (IPv4, not loopback). */
+export const networkAddresses = (): string[] =>
+  Object.values(networkInterfaces()).flatMap((list) =>
+    (list ?? []).filter((one) => one.family === 'IPv4' && !one.internal).map((one) => one.address),
+  );
+
 /** Addresses of this machine, as they stand in a URL. */
 const ownAddresses = (): string[] =>
   Object.values(networkInterfaces()).flatMap((list) =>

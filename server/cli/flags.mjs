@@ -2,7 +2,8 @@ import { Stop } from './say.mjs';
 
 /** The switches of the start command: what follows the word, and what it means. */
 const switches = {
-  '--port': { name: 'port', value: 'N', means: 'listen on this port of 127.0.0.1 (4646)' },
+  '--port': { name: 'port', value: 'N', means: 'listen on this port (4646)' },
+  '--lan': { name: 'lan', means: 'listen on the network too, so that phones and other machines reach it' },
   '--data': { name: 'data', value: 'DIR', means: 'keep database, media and secrets here' },
   '--demo': { name: 'demo', means: 'offer the demo night; with --open, make it without asking' },
   '--open': { name: 'open', means: 'with --demo: make crew, lead and demo night unattended' },
@@ -16,13 +17,14 @@ export const usualPort = 4646;
 /**
  * Reads the words after `npm start --`.
  * @param {string[]} words
- * @returns {{ port: number, data?: string, demo: boolean, open: boolean, password?: string, help: boolean }}
+ * @returns {{ port: number, data?: string, lan: boolean, demo: boolean, open: boolean, password?: string, help: boolean }}
  * @throws {Stop} code 2, with the word that was not understood
  */
 export function readFlags(words, env = process.env) {
   const flags = {
     port: env.PORT ?? String(usualPort),
     data: env.LAMPYRID_DATA,
+    lan: false,
     demo: false,
     open: false,
     help: false,
@@ -30,7 +32,7 @@ export function readFlags(words, env = process.env) {
   for (let at = 0; at < words.length; at += 1) {
     const [word, ...after] = words[at].split('=');
     const wanted = switches[word];
-    if (!wanted) throw new Stop(`${unknown(word)}\n${help()}`, 2);
+    if (!wanted) throw new Stop(`There is no switch ${word}.\n${help()}`, 2);
     if (!wanted.value) flags[wanted.name] = true;
     else {
       const value = after.length > 0 ? after.join('=') : words[++at];
@@ -39,13 +41,6 @@ export function readFlags(words, env = process.env) {
     }
   }
   return { ...flags, port: portOf(flags.port) };
-}
-
-/** @param {string} word */
-function unknown(word) {
-  if (word === '--lan' || word === '--host')
-    return `${word} is not here yet: Lampyrid listens on this machine only (127.0.0.1).`;
-  return `There is no switch ${word}.`;
 }
 
 /** @param {string} text */

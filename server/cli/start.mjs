@@ -48,6 +48,7 @@ function serverEnv(flags, home, databaseUrl) {
     NODE_ENV: process.env.NODE_ENV ?? 'production',
     DATABASE_URL: databaseUrl,
     PORT: String(flags.port),
+    ...(flags.lan && { HOST: '0.0.0.0' }),
     LAMPYRID_DATA: home,
     ...(flags.demo && { LAMPYRID_DEMO: flags.open ? 'open' : 'offer' }),
     ...(flags.password && { LAMPYRID_DEMO_PASSWORD: flags.password }),

@@ -6,8 +6,6 @@ import { showEventSchema } from '../show/events';
 import { hubMsSchema, showStateSchema } from '../show/state';
 import { screenSchema } from '../venue/schema';
 
-export { closeCodes, linkTimes, protocolVersion } from './constants';
-
 /** A file that displays fetch ahead. */
 export const manifestAssetSchema = z.object({
   id: idSchema,

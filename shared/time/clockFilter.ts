@@ -82,7 +82,7 @@ const worth = (excess: number, scale: number): number => (1 + (excess / scale) *
  * Offset and skew at `local`: weighted least squares over the kept samples, those with little queueing count most.
  * The skew is pulled towards what was believed before while few samples speak against it.
  */
-const fit = (
+const fitOffset = (
   samples: readonly ClockSample[],
   local: number,
   before: number,
@@ -123,7 +123,7 @@ export const addExchange = (clock: Clock, exchange: Exchange): Clock => {
   // Offsets near Unix time would eat the precision of the sums.
   const whole = Math.floor(sample.offset);
   const relative = samples.map((one) => ({ ...one, offset: one.offset - whole }));
-  const { offset, skew } = fit(relative, now, clock.skew);
+  const { offset, skew } = fitOffset(relative, now, clock.skew);
   const target = now + whole + offset;
   const set = (hub: number, left: number, rate = slewRate): Clock => ({
     samples,

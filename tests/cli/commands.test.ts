@@ -27,7 +27,7 @@ describe('the start command', () => {
   it.each([
     [['--port', 'x'], 'x is no port'],
     [['--port'], '--port needs a value'],
-    [['--lan'], 'not here yet'],
+    [['--sideways'], 'no switch --sideways'],
     [['--prot', '1'], 'There is no switch --prot'],
   ])('refuses %j with a sentence and code 2', (words, sentence) => {
     const done = cli('start.mjs', ...words);

@@ -21,20 +21,45 @@ const vitals: Vitals = {
   upS: 100,
   trouble: null,
 };
-const fine: DisplayStatus = { displayId: 'd1', connected: true, lastSeenAt: now - 400, vitals, changedAt: now - 900, simulated: false };
+const fine: DisplayStatus = {
+  displayId: 'd1',
+  connected: true,
+  lastSeenAt: now - 400,
+  vitals,
+  changedAt: now - 900,
+  simulated: false,
+};
 const screen = (id: string, width: number) =>
-  screenSchema.parse({ id, name: id, kind: 'projection', width, height: 1, centre: [0, 2, 0], yaw: 0, tilt: 0, roll: 0 });
+  screenSchema.parse({
+    id,
+    name: id,
+    kind: 'projection',
+    width,
+    height: 1,
+    centre: [0, 2, 0],
+    yaw: 0,
+    tilt: 0,
+    roll: 0,
+  });
 const region = (screenId: string) => ({
   id: screenId,
   screenId,
   name: screenId,
   source: { x: 0, y: 0, w: 1, h: 1 },
-  corners: [[0, 0], [1, 0], [1, 1], [0, 1]] as [[number, number], [number, number], [number, number], [number, number]],
+  corners: [
+    [0, 0],
+    [1, 0],
+    [1, 1],
+    [0, 1],
+  ] as [[number, number], [number, number], [number, number], [number, number]],
   brightness: 1,
 });
 const map = (...ids: string[]) => ({ raster: [1920, 1080] as [number, number], regions: ids.map(region) });
-const of = (displays: DisplayStatus[], screens = [screen('back', 6)], maps = { d1: map('back') } as Record<string, ReturnType<typeof map>>) =>
-  alarmsOf({ displays, names: { d1: 'Back left', d2: 'Stairs' }, maps, screens, now });
+const of = (
+  displays: DisplayStatus[],
+  screens = [screen('back', 6)],
+  maps = { d1: map('back') } as Record<string, ReturnType<typeof map>>,
+) => alarmsOf({ displays, names: { d1: 'Back left', d2: 'Stairs' }, maps, screens, now });
 
 describe('alarms of the lookout', () => {
   it('says nothing while every display draws', () => {
@@ -43,7 +68,11 @@ describe('alarms of the lookout', () => {
 
   it('names a display that is gone and for how long', () => {
     const [alarm] = of([{ ...fine, connected: false, lastSeenAt: now - 14_200 }]);
-    expect(alarm).toMatchObject({ what: 'Back left has no link for 14 s', severity: 'broken', displayId: 'd1' });
+    expect(alarm).toMatchObject({
+      what: 'Back left has no link for 14 s',
+      severity: 'broken',
+      displayId: 'd1',
+    });
   });
 
   it('finds a display that talks but stands still', () => {
@@ -56,7 +85,9 @@ describe('alarms of the lookout', () => {
   });
 
   it('finds a display whose loop has stopped while its socket lives', () => {
-    expect(of([{ ...fine, vitals: { ...vitals, fps: 0 } }])[0]?.what).toBe('Back left hardly draws: 0 frames a second');
+    expect(of([{ ...fine, vitals: { ...vitals, fps: 0 } }])[0]?.what).toBe(
+      'Back left hardly draws: 0 frames a second',
+    );
   });
 
   it('puts broken before slow, and the wall that more people see first', () => {
@@ -64,9 +95,10 @@ describe('alarms of the lookout', () => {
       { ...fine, vitals: { ...vitals, fps: 20 } },
       { ...fine, displayId: 'd2', connected: false, lastSeenAt: now - 5000 },
     ];
-    const keys = of(displays, [screen('back', 6), screen('stairs', 1), screen('bar', 2)], { d1: map('back'), d2: map('stairs') }).map(
-      (alarm) => alarm.key,
-    );
+    const keys = of(displays, [screen('back', 6), screen('stairs', 1), screen('bar', 2)], {
+      d1: map('back'),
+      d2: map('stairs'),
+    }).map((alarm) => alarm.key);
     expect(keys).toEqual(['lost d2', 'slow d1', 'bare bar']);
   });
 

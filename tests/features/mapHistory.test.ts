@@ -18,7 +18,10 @@ describe('history of an output map', () => {
   });
 
   it('counts one drag as one step', () => {
-    const dragged = [1, 2, 3].reduce((history, n) => change(history, map(100 + n), 'drag 1'), startHistory(map(100)));
+    const dragged = [1, 2, 3].reduce(
+      (history, n) => change(history, map(100 + n), 'drag 1'),
+      startHistory(map(100)),
+    );
     expect(undo(dragged).present).toEqual(map(100));
     const again = change(dragged, map(300), 'drag 2');
     expect(undo(again).present).toEqual(map(103));

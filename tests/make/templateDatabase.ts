@@ -27,7 +27,9 @@ export async function makeTemplate(migrate: Migrate): Promise<() => Promise<void
   } catch (error) {
     await remove();
     // Its message alone: the whole error repeats every statement several times.
-    throw new Error(`The tests' database could not be made: ${error instanceof Error ? error.message : error}`);
+    throw new Error(
+      `The tests' database could not be made: ${error instanceof Error ? error.message : error}`,
+    );
   }
   return remove;
 }

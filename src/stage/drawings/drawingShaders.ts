@@ -9,7 +9,16 @@ import { slats } from './slats';
 import { tide } from './tide';
 import { weave } from './weave';
 
-const bodies: Record<DrawingName, string> = { meadow, searchlights, awning, ripple, slats, tide, lanterns, weave };
+const bodies: Record<DrawingName, string> = {
+  meadow,
+  searchlights,
+  awning,
+  ripple,
+  slats,
+  tide,
+  lanterns,
+  weave,
+};
 
 /** Fragment program of a drawing, GLSL ES 3.00. */
 export const drawingFragment = (name: DrawingName): string => `${drawingHead}${bodies[name]}${drawingFoot}`;
