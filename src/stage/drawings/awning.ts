@@ -11,7 +11,7 @@ vec3 draw(vec2 p, float aspect) {
   float on = edge(0.5, wave);
   float thin = edge(0.47, wave) - edge(0.53, wave);
   float slope = fbm(vec2((p.x + 0.02) * 1.3 + wind + SEED, p.y * 0.7 - wind * 0.4)) - fbm(vec2((p.x - 0.02) * 1.3 + wind + SEED, p.y * 0.7 - wind * 0.4));
-  float light = clamp(0.62 + slope * depth * 9.0, 0.12, 1.25);
+  float light = clamp(0.72 + slope * depth * 10.0, 0.1, 1.3);
   float weave = 0.96 + 0.04 * sin(q.x * 900.0) * sin(q.y * 900.0);
   vec3 cloth = mix(P1, P2, on) * light * weave;
   cloth = mix(cloth, P3 * light, clamp(thin, 0.0, 1.0) * 0.7);

@@ -2,6 +2,7 @@
 export const lanterns = `
 vec3 draw(vec2 p, float aspect) {
   vec3 colour = mix(P1 * 0.5, P0, smoothstep(-0.6, 0.5, p.y));
+  float pixel = fwidth(p.y);
   for (int layer = 0; layer < 3; layer++) {
     float far = float(2 - layer);
     float scale = 1.6 + 1.5 * far;
@@ -21,10 +22,12 @@ vec3 draw(vec2 p, float aspect) {
       float ribs = 0.86 + 0.14 * cos(q.y * 150.0);
       float breath = 0.78 + 0.22 * cos(TAU * (BEAT / 8.0 + r.x));
       float dim = 1.0 - 0.28 * far;
-      float inside = 1.0 - edge(1.0, body);
+      // Cells meet inside one pixel's neighbours, so the width of an edge comes from p, not from body.
+      float soft = pixel * scale / 0.17;
+      float inside = 1.0 - smoothstep(1.0 - soft, 1.0 + soft, body);
       vec3 paper = mix(P3, P2, smoothstep(0.0, 1.0, body)) * ribs * (1.05 - 0.45 * body * body);
-      float line = (1.0 - edge(0.006, abs(q.x))) * step(0.2, q.y) * 0.35;
-      colour = mix(colour, P1 * 0.8, line * dim);
+      float line = (1.0 - smoothstep(0.004, 0.004 + 1.5 * pixel * scale, abs(q.x))) * step(0.2, q.y) * 0.5;
+      colour = mix(colour, P1 * 1.1, line * dim);
       colour = mix(colour, paper * breath * dim, inside);
       colour += P2 * exp(-1.9 * max(body - 1.0, 0.0)) * (1.0 - inside) * 0.34 * breath * dim;
     }

@@ -2,20 +2,23 @@
 export const meadow = `
 vec3 flies(vec2 p, float scale, float layer) {
   vec2 g = p * scale + vec2(SEED + layer * 7.3, layer * 3.1);
-  vec2 home = floor(g);
+  // The four cells whose middles are nearest: no fly of another cell is within three quarters of a cell.
+  vec2 home = floor(g - 0.5);
   vec3 light = vec3(0.0);
-  for (int y = -1; y <= 1; y++) for (int x = -1; x <= 1; x++) {
-    vec2 id = home + vec2(x, y);
+  for (int n = 0; n < 4; n++) {
+    vec2 id = home + vec2(n & 1, n >> 1);
     vec2 r = hash2(id + layer * 31.0);
-    if (hash1(id + 5.5) > 0.15 + 0.65 * A) continue;
-    vec2 at = id + 0.5 + 0.42 * vec2(sin(TIME * (0.15 + 0.2 * r.x) + TAU * r.y), cos(TIME * (0.11 + 0.17 * r.y) + TAU * r.x));
-    float d = length(g - at) / scale;
+    vec2 at = id + 0.5 + 0.25 * vec2(sin(TIME * (0.15 + 0.2 * r.x) + TAU * r.y), cos(TIME * (0.11 + 0.17 * r.y) + TAU * r.x));
+    float d = length(g - at);
+    float near = 1.0 - smoothstep(0.35, 0.75, d);
+    float here = step(hash1(id + 5.5), 0.2 + 0.8 * A);
     float phase = BEAT / 4.0 + (1.0 - B) * r.x * 3.0 + 0.12 * r.y;
-    float glow = pow(0.5 + 0.5 * cos(TAU * phase), 3.0);
-    float size = mix(0.004, 0.011, r.y) * 5.0 / scale;
-    float core = exp(-pow(d / size, 2.0));
-    float halo = exp(-d / (size * 4.0));
-    light += (P3 * halo * 0.4 + mix(P3, vec3(1.0), 0.55) * core) * (0.12 + 0.88 * glow);
+    float swell = 0.5 + 0.5 * cos(TAU * phase);
+    float glow = 0.12 + 0.88 * swell * swell * swell;
+    float size = mix(0.022, 0.055, r.y);
+    float core = exp(-d * d / (size * size));
+    float halo = exp(-d / (size * 3.5));
+    light += (P3 * halo * 0.4 + mix(P3, vec3(1.0), 0.55) * core) * glow * near * here;
   }
   return light;
 }
@@ -25,7 +28,7 @@ vec3 draw(vec2 p, float aspect) {
   colour += P2 * 0.22 * exp(-5.0 * up) * (0.6 + 0.8 * fbm(vec2(p.x * 2.0 + TIME * 0.03, up * 5.0)));
   float ridge = 0.16 + 0.05 * noise(vec2(p.x * 1.7 + SEED, 2.0)) + 0.02 * noise(vec2(p.x * 7.0, SEED));
   colour = mix(P0 * 0.6 + P1 * 0.25, colour, edge(ridge, up));
-  colour += flies(p, 4.0, 0.0) + 0.7 * flies(p, 6.5, 1.0) + 0.45 * flies(p, 10.0, 2.0);
+  colour += 1.1 * flies(p, 3.4, 0.0) + 0.75 * flies(p, 5.6, 1.0) + 0.5 * flies(p, 9.0, 2.0);
   float blade = 0.0;
   for (int i = 0; i < 2; i++) {
     float k = 26.0 + 22.0 * float(i);

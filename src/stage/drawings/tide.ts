@@ -3,6 +3,10 @@ export const tide = `
 vec3 draw(vec2 p, float aspect) {
   float t = TIME * 0.06;
   vec3 colour = mix(P0, P1, smoothstep(0.5, -0.4, p.y));
+  // A low moon behind haze, and the way it lays over the water.
+  vec2 moon = p - vec2(0.18 * aspect, 0.36);
+  float path = exp(-pow(moon.x / (0.06 + 0.35 * max(0.0, 0.3 - p.y)), 2.0));
+  colour += mix(P2, P3, 0.6) * (0.28 * exp(-9.0 * length(moon)) + 0.5 * exp(-900.0 * dot(moon, moon)));
   for (int i = 0; i < 6; i++) {
     float k = float(i);
     float far = k / 5.0;
@@ -13,8 +17,10 @@ vec3 draw(vec2 p, float aspect) {
     float under = edge(0.0, crest - p.y);
     float below = clamp((crest - p.y) / 0.3, 0.0, 1.0);
     vec3 water = mix(mix(P2, P3, 0.25 * B), P1 * 0.5, pow(below, 0.6)) * (0.35 + 0.65 * far);
-    float glint = exp(-below * 26.0) * (0.25 + 0.75 * noise(vec2(x * 5.0 + t * 3.0, k)));
-    water += P3 * glint * B * 0.55;
+    float rough = noise(vec2(x * 5.0 + t * 3.0, k));
+    float glint = exp(-below * 26.0) * (0.25 + 0.75 * rough);
+    water += P3 * glint * B * 0.8;
+    water += P3 * path * (0.15 + 0.85 * rough) * exp(-below * 9.0) * B * 0.7;
     colour = mix(colour, water, under);
   }
   return colour;
