@@ -99,7 +99,7 @@ async function makeParts(config: Config, log: Log, db: Database, hosts: HostRule
     db,
     log,
     hosts,
-    sessions: sessionMiddleware(db, secret, config),
+    sessions: sessionMiddleware(db, secret),
     routers: routersOf(context),
     pagesFolder: config.pagesFolder,
   });

@@ -3,9 +3,9 @@ import type { Display as DisplayRow } from '#server/models/display';
 import type { Display, MapVersion } from '#shared/api/displays';
 import type { OutputMap } from '#shared/mapping/schema';
 import { Fault, notFound } from '../fault';
+import { tokenHash } from '../tokens';
 import type { Caller, DisplayCaller } from '../who';
 import { emptyMap } from './emptyMap';
-import { hashOf } from './secrets';
 
 const answerOf = (row: DisplayRow, map: OutputMap | undefined): Display => ({
   id: row.id,
@@ -138,7 +138,7 @@ async function refuseUnknownScreens(db: Database, showId: string, map: OutputMap
 
 /** Who holds this device token; null when it is void. */
 export async function displayByToken(db: Database, token: string): Promise<DisplayCaller | null> {
-  const row = await db.displays.findOne({ where: { tokenHash: hashOf(token) } });
+  const row = await db.displays.findOne({ where: { tokenHash: tokenHash(token) } });
   const show = row && (await db.shows.findByPk(row.showId));
   return row && show ? { displayId: row.id, showId: show.id, crewId: show.crewId } : null;
 }

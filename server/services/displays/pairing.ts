@@ -2,9 +2,10 @@ import { Op } from 'sequelize';
 import type { Database } from '#server/models/database';
 import type { PairingCode } from '#server/models/pairingCode';
 import { Fault } from '../fault';
+import { newId, newToken, tokenHash } from '../tokens';
 import type { Caller } from '../who';
 import { emptyMap } from './emptyMap';
-import { hashOf, newCode, newId, newSecret } from './secrets';
+import { newCode } from './secrets';
 
 /** A code lives this long, ms (RFC 8628 section 6.1 leaves it open; OWASP ASVS asks for ten minutes at most). */
 const codeLifeMs = 10 * 60_000;
@@ -48,12 +49,12 @@ export async function askPairing(db: Database, asking: Asking, now = Date.now())
       'Too many displays wait to be joined.',
       'Join or close some, then wait half a minute.',
     );
-  const deviceSecret = newSecret();
+  const deviceSecret = newToken();
   const expiresAt = new Date(now + codeLifeMs);
   const code = await freeCode(db);
   await db.pairingCodes.create({
     code,
-    secretHash: hashOf(deviceSecret),
+    secretHash: tokenHash(deviceSecret),
     raster: asking.raster,
     address: asking.address,
     browser: asking.browser.slice(0, 200),
@@ -78,7 +79,7 @@ export type Waited =
 
 /** A display asks whether somebody has joined it. */
 export async function waitPairing(db: Database, deviceSecret: string, now = Date.now()): Promise<Waited> {
-  const row = await db.pairingCodes.findOne({ where: { secretHash: hashOf(deviceSecret) } });
+  const row = await db.pairingCodes.findOne({ where: { secretHash: tokenHash(deviceSecret) } });
   if (!row || row.expiresAt.getTime() <= now) return { state: 'expired', displayId: null };
   const since = row.polledAt ? now - row.polledAt.getTime() : Number.POSITIVE_INFINITY;
   await row.update({ polledAt: new Date(now) });
@@ -91,8 +92,8 @@ export async function waitPairing(db: Database, deviceSecret: string, now = Date
 
 /** Made at each answer, so that an answer that was lost on the way can be asked for again until the code ends. */
 async function tokenFor(db: Database, displayId: string): Promise<string> {
-  const token = newSecret();
-  await db.displays.update({ tokenHash: hashOf(token) }, { where: { id: displayId } });
+  const token = newToken();
+  await db.displays.update({ tokenHash: tokenHash(token) }, { where: { id: displayId } });
   return token;
 }
 

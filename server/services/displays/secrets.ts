@@ -1,4 +1,4 @@
-import { createHash, randomBytes, randomInt } from 'node:crypto';
+import { randomInt } from 'node:crypto';
 
 /** Words that are heard well over a loud room; all of four letters, all different by more than one sound. */
 export const pairingWords = [
@@ -73,12 +73,3 @@ export function newCode(): string {
   const word = pairingWords[randomInt(pairingWords.length)];
   return `${word} ${String(randomInt(10_000)).padStart(4, '0')}`;
 }
-
-/** 256 random bits as base64url. */
-export const newSecret = (): string => randomBytes(32).toString('base64url');
-
-/** What is kept of a secret: its sha256, hex. Secrets have 256 bits, so no salt or slow hash is wanted. */
-export const hashOf = (secret: string): string => createHash('sha256').update(secret).digest('hex');
-
-/** Short random id. */
-export const newId = (): string => randomBytes(9).toString('base64url');
