@@ -1,0 +1,55 @@
+/** From the scene that leaves to the one that lands. Slats turn one after the other, left to right. */
+export const transitionFragment = `#version 300 es
+precision highp float;
+in vec2 vUv;
+out vec4 outColour;
+uniform vec4 uTurn; // progress, slats (0: crossfade), width / height
+uniform sampler2D uUnder;
+uniform sampler2D uOver;
+void main() {
+  vec3 under = texture(uUnder, vUv).rgb;
+  vec3 over = texture(uOver, vUv).rgb;
+  float share = uTurn.x;
+  float shade = 1.0;
+  if (uTurn.y > 0.5) {
+    float at = vUv.x * uTurn.y;
+    float late = floor(at) / uTurn.y;
+    float turn = clamp(uTurn.x * 1.6 - late * 0.6, 0.0, 1.0);
+    turn = turn * turn * (3.0 - 2.0 * turn);
+    float f = fract(at) - 0.5;
+    float soft = 0.75 * fwidth(at);
+    float half_ = 0.5 * abs(1.0 - 2.0 * turn);
+    share = turn;
+    // Each slat swings about its own middle: the old face narrows, then the new one widens. No darker than half.
+    float inside = clamp(0.5 + (half_ - abs(f)) / max(soft, 1e-5), 0.0, 1.0);
+    share = turn < 0.5 ? mix(1.0, 0.0, inside) : mix(0.0, 1.0, inside);
+    shade = 1.0 - 0.25 * (1.0 - abs(1.0 - 2.0 * turn)) * inside;
+  }
+  outColour = vec4(mix(under, over, share) * shade, 1.0);
+}
+`;
+
+/** A region of the output map: its part of a screen's picture, dimmed, with an edge one pixel soft. */
+export const regionFragment = `#version 300 es
+precision highp float;
+in vec2 vUv;
+out vec4 outColour;
+uniform vec4 uPart; // x, y, w, h of the picture
+uniform vec4 uLight; // factor on code values
+uniform sampler2D uPicture;
+void main() {
+  vec2 inside = 0.5 - abs(vUv - 0.5);
+  vec2 pixel = fwidth(vUv) + 1e-9;
+  float cover = clamp(0.5 + min(inside.x / pixel.x, inside.y / pixel.y), 0.0, 1.0);
+  outColour = vec4(texture(uPicture, uPart.xy + vUv * uPart.zw).rgb * uLight.x, 1.0) * cover;
+}
+`;
+
+/** A picture with see-through parts (premultiplied) laid over everything. */
+export const overFragment = `#version 300 es
+precision highp float;
+in vec2 vUv;
+out vec4 outColour;
+uniform sampler2D uPicture;
+void main() { outColour = texture(uPicture, vUv); }
+`;

@@ -1,0 +1,233 @@
+import { type ImageSource, type TextureSource, WebGLRenderer } from 'pixi.js';
+import type { Corners, Region } from '#shared/mapping/schema';
+import { holdContext } from './context';
+import { createKept, type Kept } from './kept';
+import { createLayerPictures, type LayerPictures } from './layerPictures';
+import type { Size } from './layerPlace';
+import { drawLabel, drawLineUp } from './lineUp';
+import { createPass, type Pass, wholeCanvas } from './pass';
+import { createReader, type Reader } from './readBack';
+import { columnsTo, cornersOn, pictureSize } from './regionShape';
+import { createScreenPainter, type ScreenPainter } from './screenPainter';
+import { overFragment, regionFragment } from './shaders/output';
+import { createTargets, type Targets } from './targets';
+import type { FileSource, Stage, StageInput, StagePicture } from './types';
+
+interface Parts {
+  renderer: WebGLRenderer;
+  targets: Targets;
+  pictures: LayerPictures;
+  painter: ScreenPainter;
+  kept: Kept;
+  region: Pass;
+  over: Pass;
+  black: Pass;
+  reader: Reader;
+}
+
+interface Placed {
+  region: Region;
+  corners: Corners;
+}
+
+const blackFragment = `#version 300 es
+precision highp float;
+out vec4 outColour;
+void main() { outColour = vec4(0.0, 0.0, 0.0, 1.0); }
+`;
+
+/** Ms after which a reader of pictures no longer waits for the next frame: the last one is drawn again. */
+const redrawAfter = 120;
+
+const build = async (canvas: HTMLCanvasElement, files: FileSource, size: Size): Promise<Parts> => {
+  const renderer = new WebGLRenderer();
+  await renderer.init({
+    canvas,
+    ...size,
+    resolution: 1,
+    antialias: false,
+    backgroundAlpha: 1,
+    backgroundColor: '#000000',
+    clearBeforeRender: true,
+    preferWebGLVersion: 2,
+    powerPreference: 'high-performance',
+    manageImports: false,
+    hello: false,
+  });
+  const targets = createTargets();
+  const pictures = createLayerPictures(files);
+  return {
+    renderer,
+    targets,
+    pictures,
+    painter: createScreenPainter(renderer, targets, pictures),
+    kept: createKept(),
+    region: createPass(renderer, {
+      fragment: regionFragment,
+      uniforms: { uPart: 1, uLight: 1 },
+      textures: ['uPicture'],
+    }),
+    over: createPass(renderer, { fragment: overFragment, uniforms: {}, textures: ['uPicture'] }),
+    black: createPass(renderer, { fragment: blackFragment, uniforms: {}, textures: [] }),
+    reader: createReader(renderer),
+  };
+};
+
+const drawRegion = (
+  { region: pass }: Parts,
+  { region, corners }: Placed,
+  canvas: Size,
+  picture: { source: TextureSource; part: Region['source']; light: number },
+): void => {
+  const columns = columnsTo(corners, canvas);
+  if (!columns) return;
+  const { x, y, w, h } = picture.part;
+  pass.set('uPart', [x, y, w, h]);
+  pass.set('uLight', [picture.light * region.brightness]);
+  pass.texture('uPicture', picture.source);
+  pass.draw(null, columns, false);
+};
+
+const whole: Region['source'] = { x: 0, y: 0, w: 1, h: 1 };
+
+const drawGrid = (parts: Parts, placed: Placed, canvas: Size): void => {
+  const { width, height } = pictureSize([{ corners: placed.corners, source: whole }], 1);
+  const [a, b, , d] = placed.corners;
+  const shape = Math.hypot(b[0] - a[0], b[1] - a[1]) / Math.max(1, Math.hypot(d[0] - a[0], d[1] - a[1]));
+  const size = {
+    width: shape >= 1 ? width : Math.round(width * shape),
+    height: shape >= 1 ? Math.round(height / shape) : height,
+  };
+  const { name, id } = placed.region;
+  const key = `line-up ${id} ${name} ${size.width} ${size.height}`;
+  const source: ImageSource = parts.kept.of(key, () => drawLineUp(name, size.width, size.height));
+  drawRegion(parts, placed, canvas, { source, part: whole, light: 1 });
+};
+
+const drawScreens = (parts: Parts, input: StageInput, placed: readonly Placed[], canvas: Size): void => {
+  for (const frame of input.frames) {
+    const own = placed.filter(({ region }) => region.screenId === frame.screenId);
+    const metres = input.screenSizes[frame.screenId];
+    if (own.length === 0 || !metres || frame.level <= 0) continue;
+    const shapes = own.map(({ region, corners }) => ({ corners, source: region.source }));
+    const size = pictureSize(shapes, metres.width / metres.height);
+    const picture = parts.painter.paint(frame, size, input.paused);
+    for (const place of own)
+      drawRegion(parts, place, canvas, {
+        source: picture.source,
+        part: place.region.source,
+        light: frame.level,
+      });
+    parts.targets.give(picture);
+  }
+};
+
+const drawAll = (parts: Parts, input: StageInput): void => {
+  const { canvas } = parts.renderer.view;
+  const size = { width: canvas.width, height: canvas.height };
+  const placed = input.map.regions.map((region) => ({
+    region,
+    corners: cornersOn(region, input.map.raster, size),
+  }));
+  parts.black.draw(null, wholeCanvas, true);
+  if (input.lineUp) for (const place of placed) drawGrid(parts, place, size);
+  else drawScreens(parts, input, placed, size);
+  if (input.label !== null) {
+    const { label } = input;
+    parts.over.texture(
+      'uPicture',
+      parts.kept.of(`label ${label} ${size.width} ${size.height}`, () =>
+        drawLabel(label, size.width, size.height),
+      ),
+    );
+    parts.over.draw(null, wholeCanvas, false);
+  }
+  parts.pictures.tidy();
+  parts.kept.tidy();
+  parts.targets.tidy();
+};
+
+/**
+ * A stage on a canvas. It draws nothing until the renderer is ready, and nothing while the graphics card is lost; both
+ * pass by themselves.
+ */
+export const createStage = (canvas: HTMLCanvasElement, files: FileSource): Stage => {
+  let parts: Parts | null = null;
+  let size: Size = { width: Math.max(1, canvas.width), height: Math.max(1, canvas.height) };
+  let last: StageInput | null = null;
+  let fresh = false;
+  let over = false;
+  const waiting: { maxSide: number; resolve: (pictures: StagePicture[]) => void }[] = [];
+  let redraw: ReturnType<typeof setTimeout> | undefined;
+  const context = holdContext(canvas);
+
+  const serve = (): void => {
+    if (!parts || !last) return;
+    clearTimeout(redraw);
+    redraw = undefined;
+    for (const { maxSide, resolve } of waiting.splice(0))
+      void parts.reader.read(last, maxSide).then(resolve, () => resolve([]));
+  };
+
+  const drawNow = (input: StageInput): void => {
+    if (!parts || over || context.lost()) return;
+    drawAll(parts, input);
+    fresh = true;
+    // Pixels of the canvas can be read until the task ends.
+    queueMicrotask(() => {
+      fresh = false;
+    });
+    serve();
+  };
+
+  void build(canvas, files, size).then(
+    (built) => {
+      if (over) return tearDown(built);
+      parts = built;
+      built.renderer.resize(size.width, size.height);
+      if (last) drawNow(last);
+    },
+    (error: unknown) => console.error('The renderer could not start.', error),
+  );
+
+  const tearDown = (built: Parts): void => {
+    for (const part of [built.reader, built.painter, built.region, built.over, built.black]) part.dispose();
+    for (const part of [built.pictures, built.kept, built.targets]) part.dispose();
+    context.keepThrough(built.renderer);
+    built.renderer.destroy();
+    context.release();
+  };
+
+  return {
+    resize(width, height) {
+      size = { width: Math.max(1, Math.round(width)), height: Math.max(1, Math.round(height)) };
+      if (parts) parts.renderer.resize(size.width, size.height);
+      else Object.assign(canvas, size);
+    },
+    draw(input) {
+      last = input;
+      drawNow(input);
+    },
+    readPictures(maxSide) {
+      return new Promise((resolve) => {
+        if (over) return resolve([]);
+        waiting.push({ maxSide, resolve });
+        if (fresh) return serve();
+        redraw ??= setTimeout(() => {
+          redraw = undefined;
+          if (last) drawNow(last);
+          for (const { resolve: none } of waiting.splice(0)) none([]);
+        }, redrawAfter);
+      });
+    },
+    dispose() {
+      if (over) return;
+      over = true;
+      clearTimeout(redraw);
+      for (const { resolve } of waiting.splice(0)) resolve([]);
+      if (parts) tearDown(parts);
+      parts = null;
+      last = null;
+    },
+  };
+};
