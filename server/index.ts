@@ -28,7 +28,7 @@ import { openDemo } from './services/demo/openDemo';
 import type { HubCalls } from './services/hubCalls';
 import { makeHubStore } from './services/hubStore';
 import { type Log, makeLog } from './services/log';
-import { showManifest, showsUsingAssets } from './services/manifest';
+import { openShowIds, showManifest } from './services/manifest';
 import { sessionSecret } from './services/sessionCookie';
 import { anyShowLive } from './services/shows/live';
 import { authorizeSocket } from './services/socketCaller';
@@ -130,7 +130,7 @@ const hubCallsOf = (hub: Hub): Omit<HubCalls, 'assetsChanged'> => ({
 
 async function tellShows(db: Database, hub: Hub, crewId: string, log: Log): Promise<void> {
   try {
-    for (const showId of await showsUsingAssets(db, crewId)) hub.manifestChanged(showId);
+    for (const showId of await openShowIds(db, crewId)) hub.manifestChanged(showId);
   } catch (error) {
     log.warn({ err: error }, 'shows were not told of changed files');
   }

@@ -1,0 +1,45 @@
+import type { Database } from '#server/models/database';
+import type { Brand } from '#shared/api/shows';
+import { Fault, notFound } from '../fault';
+import { newId } from '../tokens';
+
+interface BrandFacts {
+  name: string;
+  palette: string[];
+  markAssetId: string | null;
+}
+
+const answerOf = ({ id, name, palette, markAssetId }: Brand): Brand => ({ id, name, palette, markAssetId });
+
+async function find(db: Database, crewId: string, id: string) {
+  const row = await db.brands.findOne({ where: { id, crewId } });
+  if (!row) throw notFound('brand');
+  return row;
+}
+
+async function refuseForeign(db: Database, crewId: string, { markAssetId }: BrandFacts): Promise<void> {
+  if (markAssetId && !(await db.assets.findOne({ where: { id: markAssetId, crewId } })))
+    throw new Fault(422, 'The mark is not in the Library.', 'Choose another file.', [
+      { path: 'markAssetId', message: 'Not in the Library.' },
+    ]);
+}
+
+export async function listBrands(db: Database, crewId: string): Promise<Brand[]> {
+  const rows = await db.brands.findAll({ where: { crewId }, order: [['name', 'ASC']] });
+  return rows.map(answerOf);
+}
+
+export async function makeBrand(db: Database, crewId: string, facts: BrandFacts): Promise<Brand> {
+  await refuseForeign(db, crewId, facts);
+  return answerOf(await db.brands.create({ id: newId(), crewId, ...facts }));
+}
+
+export async function editBrand(db: Database, crewId: string, id: string, facts: BrandFacts): Promise<Brand> {
+  await refuseForeign(db, crewId, facts);
+  return answerOf(await (await find(db, crewId, id)).update(facts));
+}
+
+/** Shows keep going without it. */
+export async function deleteBrand(db: Database, crewId: string, id: string): Promise<void> {
+  await (await find(db, crewId, id)).destroy();
+}
