@@ -30,9 +30,14 @@ uniform vec2 uCanvas;
 uniform sampler2D uDrawn;
 void main() {
   vec2 dx = dFdx(vIn), dy = dFdy(vIn);
+  vec3 middle = uMap * vec3(vIn, 1.0);
+  vec2 drawn = middle.xy / middle.z;
+  // No wider than what falls together: pixel on pixel, it is one sample.
+  float many = max(length(dFdx(drawn)), length(dFdy(drawn)));
+  float spread = clamp(1.0 - 1.0 / max(many, 1e-3), 0.0, 1.0);
   vec3 sum = vec3(0.0);
   for (int i = 0; i < 25; i++) {
-    vec2 off = (vec2(i % 5, i / 5) - 2.0) / 5.0;
+    vec2 off = (vec2(i % 5, i / 5) - 2.0) / 5.0 * spread;
     vec3 q = uMap * vec3(vIn + dx * off.x + dy * off.y, 1.0);
     vec2 at = q.xy / q.z / uCanvas;
     sum += texture(uDrawn, vec2(at.x, 1.0 - at.y)).rgb;

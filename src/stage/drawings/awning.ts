@@ -2,19 +2,35 @@
 export const awning = `
 vec3 draw(vec2 p, float aspect) {
   float wind = BEAT / 16.0;
-  float fold = fbm(vec2(p.x * 1.3 + wind + SEED, p.y * 0.7 - wind * 0.4)) + 0.35 * noise(vec2(p.x * 4.0 - wind * 2.0, p.y * 1.5 + SEED));
-  float depth = 0.08 + 0.5 * B;
-  vec2 q = turned(0.42) * p + vec2(depth * 0.5 * (fold - 0.5), 0.0);
-  float stripes = mix(11.0, 3.0, A);
-  float s = q.x * stripes + BEAT / 8.0;
+  float depth = 0.25 + 0.9 * B;
+  // Long folds and short ones across them; their slope is known, so light needs no second look.
+  vec2 slope = vec2(0.0);
+  float high = 0.0;
+  for (int i = 0; i < 4; i++) {
+    float k = float(i);
+    vec2 way = i == 0 ? vec2(0.94, 0.34) : i == 1 ? vec2(0.99, -0.12) : i == 2 ? vec2(0.72, 0.69) : vec2(0.9, -0.44);
+    float often = 3.1 + 2.3 * k + 1.9 * k * k * 0.4;
+    float tall = 0.16 / (1.0 + 0.75 * k);
+    float bow = 0.6 * sin(p.y * (1.7 + 0.6 * k) + k * 2.0 + TAU * wind * 0.5);
+    float at = dot(p, way) * often + bow - TAU * wind * (1.0 + 0.5 * k) + SEED + k * 1.9;
+    float s = sin(at), c = cos(at);
+    high += tall * s;
+    slope += way * (tall * often * c);
+  }
+  vec2 q = turned(0.36) * (p + 0.06 * depth * slope) + vec2(0.12 * depth * high, 0.0);
+  float s = q.x * mix(9.0, 2.6, A) + BEAT / 8.0;
   float wave = abs(fract(s) - 0.5) * 2.0;
-  float on = edge(0.5, wave);
-  float thin = edge(0.47, wave) - edge(0.53, wave);
-  float slope = fbm(vec2((p.x + 0.02) * 1.3 + wind + SEED, p.y * 0.7 - wind * 0.4)) - fbm(vec2((p.x - 0.02) * 1.3 + wind + SEED, p.y * 0.7 - wind * 0.4));
-  float light = clamp(0.72 + slope * depth * 10.0, 0.1, 1.3);
-  float weave = 0.96 + 0.04 * sin(q.x * 900.0) * sin(q.y * 900.0);
-  vec3 cloth = mix(P1, P2, on) * light * weave;
-  cloth = mix(cloth, P3 * light, clamp(thin, 0.0, 1.0) * 0.7);
-  cloth += P3 * pow(clamp(slope * depth * 5.0, 0.0, 1.0), 2.0) * 0.5;
-  return mix(P0, cloth, 0.35 + 0.65 * smoothstep(0.75, -0.1, length(p / vec2(aspect, 1.0))));
+  float soft = fwidth(s) * 2.0 + 1e-4;
+  float on = smoothstep(-soft, soft, wave - 0.5);
+  float thread = smoothstep(soft, 0.0, abs(wave - 0.42) - 0.025);
+  vec3 n = normalize(vec3(-slope * depth * 0.55, 1.0));
+  float lit = clamp(dot(n, normalize(vec3(-0.62, 0.42, 0.55))), 0.0, 1.0);
+  float sheen = clamp(dot(n, normalize(vec3(-0.36, 0.25, 0.9))), 0.0, 1.0);
+  sheen *= sheen; sheen *= sheen; sheen *= sheen; sheen *= sheen; sheen *= sheen;
+  float shade = lit * lit * (1.05 + 0.35 * lit);
+  vec3 cloth = mix(P1 * 0.75, P2, on);
+  cloth = mix(cloth, P3, thread * 0.75);
+  vec3 colour = mix(P0 * 0.35, cloth, 0.03 + shade) + mix(P2, P3, 0.6) * sheen * (0.10 + 0.14 * on);
+  float far = dot(p / vec2(aspect, 1.0), p / vec2(aspect, 1.0));
+  return colour * (1.0 - 1.5 * far);
 }`;

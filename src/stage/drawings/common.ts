@@ -25,6 +25,14 @@ float hash1(vec2 p) {
   return fract((q.x + q.y) * q.z);
 }
 vec2 hash2(vec2 p) { return vec2(hash1(p), hash1(p + 17.17)); }
+/* Three at the price of one. */
+vec3 hash3(vec2 p) {
+  vec3 q = fract(vec3(p.xyx) * vec3(0.1031, 0.1030, 0.0973));
+  q += dot(q, q.yxz + 33.33);
+  return fract((q.xxy + q.yzz) * q.zyx);
+}
+/* A swell without a cosine: 1 at whole numbers, 0 half way, soft at both. */
+float swell(float x) { float w = abs(fract(x) - 0.5) * 2.0; return w * w * (3.0 - 2.0 * w); }
 float noise(vec2 p) {
   vec2 i = floor(p), f = fract(p);
   f = f * f * (3.0 - 2.0 * f);
