@@ -1,4 +1,4 @@
-/** From the scene that leaves to the one that lands. Slats turn one after the other, left to right. */
+/** From the scene that leaves to the one that lands. Slats turn away one after the other, left to right. */
 export const transitionFragment = `#version 300 es
 precision highp float;
 in vec2 vUv;
@@ -18,12 +18,11 @@ void main() {
     turn = turn * turn * (3.0 - 2.0 * turn);
     float f = fract(at) - 0.5;
     float soft = 0.75 * fwidth(at);
-    float half_ = 0.5 * abs(1.0 - 2.0 * turn);
-    share = turn;
-    // Each slat swings about its own middle: the old face narrows, then the new one widens. No darker than half.
-    float inside = clamp(0.5 + (half_ - abs(f)) / max(soft, 1e-5), 0.0, 1.0);
-    share = turn < 0.5 ? mix(1.0, 0.0, inside) : mix(0.0, 1.0, inside);
-    shade = 1.0 - 0.25 * (1.0 - abs(1.0 - 2.0 * turn)) * inside;
+    // A slat swings about its own middle: its face narrows and darkens, and the next scene stands behind it.
+    float half_ = 0.5 * (1.0 - turn) * (1.0 + 4.0 * soft);
+    float face = clamp(0.5 + (half_ - abs(f)) / max(soft, 1e-5), 0.0, 1.0) * step(turn, 0.9999);
+    share = 1.0 - face;
+    shade = 1.0 - 0.3 * turn * face;
   }
   outColour = vec4(mix(under, over, share) * shade, 1.0);
 }
