@@ -1,9 +1,10 @@
 import { ImageSource, type TextureSource } from 'pixi.js';
 import type { DrawItem } from '#shared/scene/drawingList';
 import { type ClipPlayer, createClipPlayer } from './clipPlayer';
+import { fontReady } from './fonts';
 import type { Size } from './layerPlace';
 import type { FileSource } from './types';
-import { fontFamily, type Words, wordsPicture, wordsSide } from './wordsPicture';
+import { type Words, wordsPicture, wordsSide } from './wordsPicture';
 
 export interface LayerPicture {
   source: TextureSource;
@@ -44,7 +45,6 @@ const still = (source: TextureSource, size: Size, destroy: () => void, from: unk
 
 export const createLayerPictures = (files: FileSource): LayerPictures => {
   const held = new Map<string, Held>();
-  const fontsAsked = new Map<string, boolean>();
   let frame = 0;
 
   const keep = (key: string, from: unknown, make: () => Held): Held => {
@@ -60,21 +60,9 @@ export const createLayerPictures = (files: FileSource): LayerPictures => {
     return made;
   };
 
-  /** Words are drawn at once in what there is and again when their font has come. */
-  const fontReady = (words: Words): boolean => {
-    const font = `${words.weight} 100px ${fontFamily(words.mono)}`;
-    const known = fontsAsked.get(font);
-    if (known !== undefined) return known;
-    fontsAsked.set(font, document.fonts.check(font, words.text));
-    document.fonts.load(font, words.text).then(
-      () => fontsAsked.set(font, true),
-      () => fontsAsked.set(font, true),
-    );
-    return fontsAsked.get(font) ?? false;
-  };
-
   const words = (source: Words, item: DrawItem, screen: Size): LayerPicture | null => {
-    const ready = fontReady(source);
+    // Drawn at once in what there is, and again when their font has come.
+    const ready = fontReady(source.weight, source.mono, source.text);
     const aspect = screen.width / screen.height;
     const content = [source.text, source.weight, source.colour, source.mono, aspect.toFixed(2)].join(' ');
     const side = wordsSide(Math.max(screen.width, screen.height) * Math.min(1, item.place.scale));

@@ -1,6 +1,7 @@
 import { type ImageSource, type TextureSource, WebGLRenderer } from 'pixi.js';
 import type { Corners, Region } from '#shared/mapping/schema';
 import { holdContext } from './context';
+import { fontReady } from './fonts';
 import { createKept, type Kept } from './kept';
 import { createLayerPictures, type LayerPictures } from './layerPictures';
 import type { Size } from './layerPlace';
@@ -90,17 +91,15 @@ const drawRegion = (
 
 const whole: Region['source'] = { x: 0, y: 0, w: 1, h: 1 };
 
-const drawGrid = (parts: Parts, placed: Placed, canvas: Size): void => {
-  const { width, height } = pictureSize([{ corners: placed.corners, source: whole }], 1);
-  const [a, b, , d] = placed.corners;
-  const shape = Math.hypot(b[0] - a[0], b[1] - a[1]) / Math.max(1, Math.hypot(d[0] - a[0], d[1] - a[1]));
-  const size = {
-    width: shape >= 1 ? width : Math.round(width * shape),
-    height: shape >= 1 ? Math.round(height / shape) : height,
-  };
-  const { name, id } = placed.region;
-  const key = `line-up ${id} ${name} ${size.width} ${size.height}`;
-  const source: ImageSource = parts.kept.of(key, () => drawLineUp(name, size.width, size.height));
+/** The grid in the shape the region has on its screen, so that its circle is round on the wall. */
+const drawGrid = (parts: Parts, placed: Placed, canvas: Size, screen: Size | undefined): void => {
+  const { region, corners } = placed;
+  const { w, h } = region.source;
+  const shape = screen ? (screen.width * w) / (screen.height * h) : 16 / 9;
+  const size = pictureSize([{ corners, source: whole }], shape);
+  const ready = fontReady(700, false, region.name);
+  const key = `line-up ${region.id} ${region.name} ${size.width} ${size.height} ${ready}`;
+  const source: ImageSource = parts.kept.of(key, () => drawLineUp(region.name, size.width, size.height));
   drawRegion(parts, placed, canvas, { source, part: whole, light: 1 });
 };
 
@@ -130,13 +129,14 @@ const drawAll = (parts: Parts, input: StageInput): void => {
     corners: cornersOn(region, input.map.raster, size),
   }));
   parts.black.draw(null, wholeCanvas, true);
-  if (input.lineUp) for (const place of placed) drawGrid(parts, place, size);
+  if (input.lineUp)
+    for (const place of placed) drawGrid(parts, place, size, input.screenSizes[place.region.screenId]);
   else drawScreens(parts, input, placed, size);
   if (input.label !== null) {
     const { label } = input;
     parts.over.texture(
       'uPicture',
-      parts.kept.of(`label ${label} ${size.width} ${size.height}`, () =>
+      parts.kept.of(`label ${label} ${size.width} ${size.height} ${fontReady(700, false, label)}`, () =>
         drawLabel(label, size.width, size.height),
       ),
     );

@@ -1,11 +1,9 @@
 import { ImageSource } from 'pixi.js';
 import type { DrawSource } from '#shared/scene/drawingList';
+import { fontFamily } from './fonts';
 import type { Size } from './layerPlace';
 
 export type Words = Extract<DrawSource, { kind: 'words' }>;
-
-export const fontFamily = (mono: boolean): string =>
-  mono ? '"Atkinson Hyperlegible Mono", monospace' : '"Atkinson Hyperlegible Next", sans-serif';
 
 const lineHeight = 1.12;
 /** Size words are measured at before their true size is known, pixels. */
