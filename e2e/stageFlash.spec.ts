@@ -1,7 +1,7 @@
 import { expect, test } from '@playwright/test';
 import { type DrawingName, drawingNames } from '#shared/scene/schema';
+import { flashes, flashShare } from '#tests/shared/scene/flashes';
 import type { StagePage } from './stagePage/stagePage';
-import { flashes, flashShare } from './support/flashes';
 import { openStagePage } from './support/stageBundle';
 import { watchConsole } from './support/watchConsole';
 

@@ -93,7 +93,8 @@ const showPicture = (input: EvaluateInput, t: number): Picture => {
 
 /** The show's picture, or the calm one, or a crossfade between them. */
 const withCalm = (input: EvaluateInput, t: number): Picture => {
-  const calm = along(input.state.calm, t, fades.calm);
+  // Calm is for people's sake: it comes even while the picture is frozen.
+  const calm = along(input.state.calm, input.t, fades.calm);
   if (calm <= 0) return showPicture(input, t);
   if (calm >= 1) return { under: null, over: calmList(input, t), transition: null, runId: null };
   const show = showPicture(input, t);

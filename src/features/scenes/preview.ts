@@ -75,7 +75,9 @@ const wholeMap = ([w, h]: [number, number]): OutputMap => ({
 export const startPreview = (canvas: HTMLCanvasElement, input: () => PreviewInput): (() => void) => {
   const files = createFileStore();
   const stage = createStage(canvas, files);
-  let state: ShowState = startState('preview', 'live', 0);
+  // Switches were let go long ago, so that nothing fades when the preview opens.
+  const never = { on: false, at: Number.NEGATIVE_INFINITY };
+  let state: ShowState = { ...startState('preview', 'live', 0), calm: never, blackout: never };
   let wanted: readonly Asset[] | null = null;
   let size = '';
   let t = 0;
@@ -120,5 +122,6 @@ export const startPreview = (canvas: HTMLCanvasElement, input: () => PreviewInpu
   return () => {
     cancelAnimationFrame(handle);
     stage.dispose();
+    files.dispose();
   };
 };
