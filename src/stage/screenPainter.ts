@@ -1,18 +1,18 @@
 import type { RenderTexture, TextureSource, WebGLRenderer } from 'pixi.js';
 import type { DrawItem, DrawList, DrawSource, ScreenFrame } from '#shared/scene/drawingList';
-import type { DrawingName } from '#shared/scene/schema';
+import type { BlendMode, DrawingName } from '#shared/scene/schema';
 import { drawingFragment } from './drawings/drawingShaders';
 import type { LayerPictures } from './layerPictures';
 import { fillsScreen, layerMap, type Size } from './layerPlace';
-import { createPass, type Pass, wholeTexture } from './pass';
-import { composeFragment, modeNumber, slots } from './shaders/compose';
+import { createPass, intoTexture, type Output, type Pass } from './pass';
+import { composeFragment, slots } from './shaders/compose';
 import { transitionFragment } from './shaders/output';
 import type { Targets } from './targets';
 
 /** Draws the picture of one screen. */
 export interface ScreenPainter {
-  /** The picture, to be given back to the targets after use. */
-  paint(frame: ScreenFrame, size: Size, paused: boolean): RenderTexture;
+  /** Draws it into each output. The last pass goes there straight: no picture in between. */
+  paint(frame: ScreenFrame, size: Size, paused: boolean, outputs: readonly Output[]): void;
   dispose(): void;
 }
 
@@ -22,38 +22,94 @@ interface Laid {
   size: Size;
 }
 
+/** A pass that is set up, and the scratch pictures it reads. */
+interface Ready {
+  pass: Pass;
+  reads: RenderTexture[];
+}
+
 type Drawing = Extract<DrawSource, { kind: 'drawing' }>;
 
 /** Slats of the transition across a screen as wide as it is high. */
 const slatsAcross = 7;
+/** Compose programs kept: one for each order of modes that scenes use. */
+const mostPrograms = 48;
 
-const createDrawings = (renderer: WebGLRenderer, targets: Targets) => {
-  const passes = new Map<DrawingName, Pass>();
-  const passOf = (name: DrawingName): Pass => {
-    const pass =
-      passes.get(name) ??
-      createPass(renderer, {
-        fragment: drawingFragment(name),
-        uniforms: { uMoment: 1, uDials: 1, uP0: 1, uP1: 1, uP2: 1, uP3: 1 },
-        textures: [],
-      });
-    passes.set(name, pass);
-    return pass;
-  };
+/** Things made once for a key; the oldest goes when there are too many. */
+const createStore = (most: number, make: (key: string) => Pass) => {
+  const held = new Map<string, Pass>();
   return {
-    draw(source: Drawing, size: Size): RenderTexture {
-      const pass = passOf(source.drawing);
+    of(key: string): Pass {
+      const pass = held.get(key) ?? make(key);
+      held.delete(key);
+      held.set(key, pass);
+      const [oldest] = held;
+      if (held.size > most && oldest) {
+        held.delete(oldest[0]);
+        oldest[1].dispose();
+      }
+      return pass;
+    },
+    dispose() {
+      for (const pass of held.values()) pass.dispose();
+    },
+  };
+};
+
+const createDrawings = (renderer: WebGLRenderer) => {
+  const passes = createStore(Number.POSITIVE_INFINITY, (name) =>
+    createPass(renderer, {
+      fragment: drawingFragment(name as DrawingName),
+      uniforms: { uMoment: 1, uDials: 1, uP0: 1, uP1: 1, uP2: 1, uP3: 1 },
+      textures: [],
+    }),
+  );
+  return {
+    ready(source: Drawing, size: Size): Pass {
+      const pass = passes.of(source.drawing);
       pass.set('uMoment', [source.beat, source.timeS, source.seed, size.width / size.height]);
       pass.set('uDials', [source.a, source.b]);
       for (let i = 0; i < 4; i += 1) pass.set(`uP${i}`, [...(source.palette[i] ?? [0, 0, 0]), 1]);
-      const target = targets.take(size.width, size.height);
-      pass.draw(target, wholeTexture, true);
-      return target;
+      return pass;
     },
-    dispose() {
-      for (const pass of passes.values()) pass.dispose();
-    },
+    dispose: () => passes.dispose(),
   };
+};
+
+const createComposer = (renderer: WebGLRenderer) => {
+  const passes = createStore(mostPrograms, (key) => {
+    const [start, ...modes] = key.split(' ');
+    return createPass(renderer, {
+      fragment: composeFragment(modes as BlendMode[], start === 'base'),
+      uniforms: { uGround: 1, uAcross: slots, uDown: slots, uSize: slots },
+      textures: [...(start === 'base' ? ['uBase'] : []), ...modes.map((_, i) => `uLayer${i}`)],
+    });
+  });
+  return {
+    ready(list: DrawList, base: RenderTexture | null, layers: readonly Laid[], screen: Size): Pass {
+      const pass = passes.of([base ? 'base' : 'ground', ...layers.map(({ item }) => item.blend)].join(' '));
+      pass.set('uGround', list.ground);
+      if (base) pass.texture('uBase', base.source);
+      for (const [i, { item, source, size }] of layers.entries()) {
+        const map = layerMap(item, size, screen);
+        pass.set('uAcross', [...map.across, item.opacity], i);
+        pass.set('uDown', map.down, i);
+        pass.set('uSize', [map.size.width, map.size.height], i);
+        pass.texture(`uLayer${i}`, source);
+      }
+      return pass;
+    },
+    dispose: () => passes.dispose(),
+  };
+};
+
+const isSeen = (item: DrawItem): boolean => item.opacity > 0 && item.place.scale > 0;
+
+/** The one drawing that is all there is to see, if so. */
+const aloneIn = (items: readonly DrawItem[]): Drawing | null => {
+  const [only, second] = items;
+  if (!only || second || only.source.kind !== 'drawing') return null;
+  return only.opacity === 1 && only.blend === 'normal' && fillsScreen(only) ? only.source : null;
 };
 
 export const createScreenPainter = (
@@ -61,92 +117,68 @@ export const createScreenPainter = (
   targets: Targets,
   pictures: LayerPictures,
 ): ScreenPainter => {
-  const drawings = createDrawings(renderer, targets);
-  const layerNames = Array.from({ length: slots }, (_, i) => `uLayer${i}`);
-  const compose = createPass(renderer, {
-    fragment: composeFragment,
-    uniforms: { uGround: 1, uCount: 1, uAcross: slots, uDown: slots, uSize: slots },
-    textures: ['uBase', ...layerNames],
-  });
+  const drawings = createDrawings(renderer);
+  const composer = createComposer(renderer);
   const transition = createPass(renderer, {
     fragment: transitionFragment,
     uniforms: { uTurn: 1 },
     textures: ['uUnder', 'uOver'],
   });
 
-  const setSlot = (i: number, { item, source, size }: Laid, screen: Size): void => {
-    const map = layerMap(item, size, screen);
-    compose.set('uAcross', [...map.across, item.opacity], i);
-    compose.set('uDown', [...map.down, modeNumber(item.blend)], i);
-    compose.set('uSize', [map.size.width, map.size.height], i);
-    compose.texture(`uLayer${i}`, source);
+  const finish = ({ pass, reads }: Ready, outputs: readonly Output[]): void => {
+    for (const output of outputs) pass.draw(output);
+    pass.release();
+    for (const target of reads) targets.give(target);
+  };
+
+  const drawn = (ready: Ready, size: Size): RenderTexture => {
+    const target = targets.take(size.width, size.height);
+    finish(ready, [intoTexture(target)]);
+    return target;
   };
 
   /** Layers four at a time; a further pass starts from what the last one drew. */
-  const lay = (list: DrawList, paused: boolean, size: Size): RenderTexture => {
+  const readyList = (list: DrawList, paused: boolean, size: Size): Ready => {
+    const items = list.items.filter(isSeen);
+    const alone = aloneIn(items);
+    if (alone) return { pass: drawings.ready(alone, size), reads: [] };
     let base: RenderTexture | null = null;
-    let waiting: Laid[] = [];
-    let scratch: RenderTexture[] = [];
-    const flush = (): void => {
-      const target = targets.take(size.width, size.height);
-      compose.set('uGround', base ? [0, 0, 0, 1] : [...list.ground, 0]);
-      compose.set('uCount', [waiting.length]);
-      if (base) compose.texture('uBase', base.source);
-      for (const [i, laid] of waiting.entries()) setSlot(i, laid, size);
-      compose.draw(target, wholeTexture, true);
-      for (const target_ of scratch) targets.give(target_);
-      if (base) targets.give(base);
-      base = target;
-      waiting = [];
-      scratch = [];
-    };
-    for (const item of list.items) {
-      if (item.opacity <= 0 || item.place.scale === 0) continue;
-      if (waiting.length === slots) flush();
-      if (item.source.kind === 'drawing') {
-        const drawn = drawings.draw(item.source, size);
-        scratch.push(drawn);
-        waiting.push({ item, source: drawn.source, size });
-      } else {
-        const picture = pictures.of(item, size, paused);
-        if (picture) waiting.push({ item, ...picture });
+    let layers: Laid[] = [];
+    let reads: RenderTexture[] = [];
+    for (const item of items) {
+      if (layers.length === slots) {
+        base = drawn({ pass: composer.ready(list, base, layers, size), reads }, size);
+        layers = [];
+        reads = [base];
       }
+      if (item.source.kind === 'drawing') {
+        const scratch = drawn({ pass: drawings.ready(item.source, size), reads: [] }, size);
+        reads.push(scratch);
+        layers.push({ item, source: scratch.source, size });
+        continue;
+      }
+      const picture = pictures.of(item, size, paused);
+      if (picture) layers.push({ item, ...picture });
     }
-    if (waiting.length > 0 || !base) flush();
-    return base as unknown as RenderTexture;
-  };
-
-  const paintList = (list: DrawList, paused: boolean, size: Size): RenderTexture => {
-    const [only, second] = list.items;
-    const stands =
-      only &&
-      !second &&
-      only.source.kind === 'drawing' &&
-      only.opacity === 1 &&
-      only.blend === 'normal' &&
-      fillsScreen(only);
-    return stands ? drawings.draw(only.source as Drawing, size) : lay(list, paused, size);
+    return { pass: composer.ready(list, base, layers, size), reads };
   };
 
   return {
-    paint({ under, over, transition: turn }, size, paused) {
-      const top = paintList(over, paused, size);
-      if (!under || !turn || turn.kind === 'cut' || turn.progress >= 1) return top;
-      const bottom = paintList(under, paused, size);
-      const target = targets.take(size.width, size.height);
+    paint({ under, over, transition: turn }, size, paused, outputs) {
+      if (!under || !turn || turn.kind === 'cut' || turn.progress >= 1)
+        return finish(readyList(over, paused, size), outputs);
+      const top = drawn(readyList(over, paused, size), size);
+      const bottom = drawn(readyList(under, paused, size), size);
       const slats =
         turn.kind === 'slats' ? Math.max(3, Math.round((slatsAcross * size.width) / size.height)) : 0;
       transition.set('uTurn', [turn.progress, slats, size.width / size.height]);
       transition.texture('uUnder', bottom.source);
       transition.texture('uOver', top.source);
-      transition.draw(target, wholeTexture, true);
-      targets.give(bottom);
-      targets.give(top);
-      return target;
+      finish({ pass: transition, reads: [top, bottom] }, outputs);
     },
     dispose() {
       drawings.dispose();
-      compose.dispose();
+      composer.dispose();
       transition.dispose();
     },
   };

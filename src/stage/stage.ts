@@ -1,4 +1,4 @@
-import { type ImageSource, type TextureSource, WebGLRenderer } from 'pixi.js';
+import { WebGLRenderer } from 'pixi.js';
 import type { Corners, Region } from '#shared/mapping/schema';
 import { holdContext } from './context';
 import { fontReady } from './fonts';
@@ -6,11 +6,11 @@ import { createKept, type Kept } from './kept';
 import { createLayerPictures, type LayerPictures } from './layerPictures';
 import type { Size } from './layerPlace';
 import { drawLabel, drawLineUp } from './lineUp';
-import { createPass, type Pass, wholeCanvas } from './pass';
+import { createPass, type Output, overCanvas, type Pass } from './pass';
 import { createReader, type Reader } from './readBack';
 import { columnsTo, cornersOn, pictureSize } from './regionShape';
 import { createScreenPainter, type ScreenPainter } from './screenPainter';
-import { overFragment, regionFragment } from './shaders/output';
+import { overFragment, pictureFragment } from './shaders/output';
 import { createTargets, type Targets } from './targets';
 import type { FileSource, Stage, StageInput, StagePicture } from './types';
 
@@ -20,7 +20,7 @@ interface Parts {
   pictures: LayerPictures;
   painter: ScreenPainter;
   kept: Kept;
-  region: Pass;
+  picture: Pass;
   over: Pass;
   black: Pass;
   reader: Reader;
@@ -63,30 +63,23 @@ const build = async (canvas: HTMLCanvasElement, files: FileSource, size: Size): 
     pictures,
     painter: createScreenPainter(renderer, targets, pictures),
     kept: createKept(),
-    region: createPass(renderer, {
-      fragment: regionFragment,
-      uniforms: { uPart: 1, uLight: 1 },
-      textures: ['uPicture'],
-    }),
+    picture: createPass(renderer, { fragment: pictureFragment, uniforms: {}, textures: ['uPicture'] }),
     over: createPass(renderer, { fragment: overFragment, uniforms: {}, textures: ['uPicture'] }),
     black: createPass(renderer, { fragment: blackFragment, uniforms: {}, textures: [] }),
     reader: createReader(renderer),
   };
 };
 
-const drawRegion = (
-  { region: pass }: Parts,
+/** Where a region's picture goes; null when its corners make no picture. */
+const outputOf = (
   { region, corners }: Placed,
   canvas: Size,
-  picture: { source: TextureSource; part: Region['source']; light: number },
-): void => {
-  const columns = columnsTo(corners, canvas);
-  if (!columns) return;
-  const { x, y, w, h } = picture.part;
-  pass.set('uPart', [x, y, w, h]);
-  pass.set('uLight', [picture.light * region.brightness]);
-  pass.texture('uPicture', picture.source);
-  pass.draw(null, columns, false);
+  part: Region['source'],
+  light: number,
+): Output | null => {
+  const map = columnsTo(corners, canvas);
+  const { x, y, w, h } = part;
+  return map && { target: null, map, part: [x, y, w, h], light: light * region.brightness, clear: false };
 };
 
 const whole: Region['source'] = { x: 0, y: 0, w: 1, h: 1 };
@@ -94,13 +87,19 @@ const whole: Region['source'] = { x: 0, y: 0, w: 1, h: 1 };
 /** The grid in the shape the region has on its screen, so that its circle is round on the wall. */
 const drawGrid = (parts: Parts, placed: Placed, canvas: Size, screen: Size | undefined): void => {
   const { region, corners } = placed;
+  const output = outputOf(placed, canvas, whole, 1);
+  if (!output) return;
   const { w, h } = region.source;
   const shape = screen ? (screen.width * w) / (screen.height * h) : 16 / 9;
   const size = pictureSize([{ corners, source: whole }], shape);
   const ready = fontReady(700, false, region.name);
   const key = `line-up ${region.id} ${region.name} ${size.width} ${size.height} ${ready}`;
-  const source: ImageSource = parts.kept.of(key, () => drawLineUp(region.name, size.width, size.height));
-  drawRegion(parts, placed, canvas, { source, part: whole, light: 1 });
+  parts.picture.texture(
+    'uPicture',
+    parts.kept.of(key, () => drawLineUp(region.name, size.width, size.height)),
+  );
+  parts.picture.draw(output);
+  parts.picture.release();
 };
 
 const drawScreens = (parts: Parts, input: StageInput, placed: readonly Placed[], canvas: Size): void => {
@@ -109,15 +108,9 @@ const drawScreens = (parts: Parts, input: StageInput, placed: readonly Placed[],
     const metres = input.screenSizes[frame.screenId];
     if (own.length === 0 || !metres || frame.level <= 0) continue;
     const shapes = own.map(({ region, corners }) => ({ corners, source: region.source }));
+    const outputs = own.flatMap((place) => outputOf(place, canvas, place.region.source, frame.level) ?? []);
     const size = pictureSize(shapes, metres.width / metres.height);
-    const picture = parts.painter.paint(frame, size, input.paused);
-    for (const place of own)
-      drawRegion(parts, place, canvas, {
-        source: picture.source,
-        part: place.region.source,
-        light: frame.level,
-      });
-    parts.targets.give(picture);
+    parts.painter.paint(frame, size, input.paused, outputs);
   }
 };
 
@@ -128,7 +121,7 @@ const drawAll = (parts: Parts, input: StageInput): void => {
     region,
     corners: cornersOn(region, input.map.raster, size),
   }));
-  parts.black.draw(null, wholeCanvas, true);
+  parts.black.draw(overCanvas(true));
   if (input.lineUp)
     for (const place of placed) drawGrid(parts, place, size, input.screenSizes[place.region.screenId]);
   else drawScreens(parts, input, placed, size);
@@ -140,7 +133,8 @@ const drawAll = (parts: Parts, input: StageInput): void => {
         drawLabel(label, size.width, size.height),
       ),
     );
-    parts.over.draw(null, wholeCanvas, false);
+    parts.over.draw(overCanvas(false));
+    parts.over.release();
   }
   parts.pictures.tidy();
   parts.kept.tidy();
@@ -191,7 +185,7 @@ export const createStage = (canvas: HTMLCanvasElement, files: FileSource): Stage
   );
 
   const tearDown = (built: Parts): void => {
-    for (const part of [built.reader, built.painter, built.region, built.over, built.black]) part.dispose();
+    for (const part of [built.reader, built.painter, built.picture, built.over, built.black]) part.dispose();
     for (const part of [built.pictures, built.kept, built.targets]) part.dispose();
     context.keepThrough(built.renderer);
     built.renderer.destroy();

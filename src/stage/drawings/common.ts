@@ -1,8 +1,11 @@
+import { shownFunction } from '../shaders/quad';
+
 /** Head of every drawing: inputs, palette names and the little mathematics they share. */
 export const drawingHead = `#version 300 es
 precision highp float;
 in vec2 vUv;
 out vec4 outColour;
+${shownFunction}
 uniform vec4 uMoment; // beat, seconds, seed, aspect
 uniform vec4 uDials;  // a, b, unused, unused
 uniform vec4 uP0;
@@ -55,6 +58,6 @@ void main() {
   vec2 p = vec2((vUv.x - 0.5) * aspect, 0.5 - vUv.y);
   vec3 colour = draw(p, aspect);
   colour += (hash1(gl_FragCoord.xy) - 0.5) / 255.0;
-  outColour = vec4(clamp(colour, 0.0, 1.0), 1.0);
+  outColour = shown(clamp(colour, 0.0, 1.0));
 }
 `;

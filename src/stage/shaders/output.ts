@@ -1,3 +1,5 @@
+import { shownFunction } from './quad';
+
 /** From the scene that leaves to the one that lands. Slats turn away one after the other, left to right. */
 export const transitionFragment = `#version 300 es
 precision highp float;
@@ -6,6 +8,7 @@ out vec4 outColour;
 uniform vec4 uTurn; // progress, slats (0: crossfade), width / height
 uniform sampler2D uUnder;
 uniform sampler2D uOver;
+${shownFunction}
 void main() {
   vec3 under = texture(uUnder, vUv).rgb;
   vec3 over = texture(uOver, vUv).rgb;
@@ -24,24 +27,18 @@ void main() {
     share = 1.0 - face;
     shade = 1.0 - 0.3 * turn * face;
   }
-  outColour = vec4(mix(under, over, share) * shade, 1.0);
+  outColour = shown(mix(under, over, share) * shade);
 }
 `;
 
-/** A region of the output map: its part of a screen's picture, dimmed, with an edge one pixel soft. */
-export const regionFragment = `#version 300 es
+/** A picture in a region of the output map. */
+export const pictureFragment = `#version 300 es
 precision highp float;
 in vec2 vUv;
 out vec4 outColour;
-uniform vec4 uPart; // x, y, w, h of the picture
-uniform vec4 uLight; // factor on code values
 uniform sampler2D uPicture;
-void main() {
-  vec2 inside = 0.5 - abs(vUv - 0.5);
-  vec2 pixel = fwidth(vUv) + 1e-9;
-  float cover = clamp(0.5 + min(inside.x / pixel.x, inside.y / pixel.y), 0.0, 1.0);
-  outColour = vec4(texture(uPicture, uPart.xy + vUv * uPart.zw).rgb * uLight.x, 1.0) * cover;
-}
+${shownFunction}
+void main() { outColour = shown(texture(uPicture, vUv).rgb); }
 `;
 
 /** A picture with see-through parts (premultiplied) laid over everything. */
