@@ -1,0 +1,120 @@
+import type { OutputMap } from '#shared/mapping/schema';
+import { evaluateScreen, sceneBodies } from '#shared/scene/evaluate';
+import type { ShowLink } from '@/link/types';
+import { createFileStore } from '@/stage/fileStore';
+import { pictureData } from '@/stage/pictureData';
+import { createStage } from '@/stage/stage';
+import { type Known, recall } from './lastPicture';
+import { ChangeCounter, drawnReporter } from './reports';
+
+/** Longest side of the small pictures for the skyline, px, and how often they are made, ms. */
+const small = { side: 160, everyMs: 1000 } as const;
+
+/** What one display puts on its canvas: the show's state at the hub's time, through its output map. */
+export class DisplayPicture {
+  readonly files = createFileStore();
+  readonly changes = new ChangeCounter();
+  size: [number, number] = [16, 16];
+  private readonly stage;
+  private readonly reportDrawn;
+  private readonly kept: Known | null;
+  private bodies: ReturnType<typeof sceneBodies> = new Map();
+  private revision = '';
+  private draft: OutputMap | null = null;
+  private lastMap: OutputMap | null = null;
+  private reading = false;
+  private readAt = 0;
+
+  constructor(
+    canvas: HTMLCanvasElement,
+    private readonly link: ShowLink,
+    private readonly displayId: string,
+    private readonly onFault: (error: unknown) => void,
+  ) {
+    this.stage = createStage(canvas, this.files);
+    this.reportDrawn = drawnReporter(link, displayId);
+    this.kept = recall(displayId);
+  }
+
+  /** What the hub has told, or null while only what was kept over a reload is known. */
+  fromHub(): Known | null {
+    const { state, manifest, maps, displayNames } = this.link.getSnapshot();
+    const map = maps[this.displayId];
+    if (!state || !manifest || !map) return null;
+    return { state, manifest, map, name: displayNames[this.displayId] ?? '' };
+  }
+
+  /** A map that is being dragged: drawn from the next frame on, until a saved one comes. */
+  setDraft(map: OutputMap): void {
+    this.draft = map;
+  }
+
+  private fitWindow(): void {
+    const scale = window.devicePixelRatio;
+    const width = Math.max(16, Math.round(window.innerWidth * scale));
+    const height = Math.max(16, Math.round(window.innerHeight * scale));
+    if (width === this.size[0] && height === this.size[1]) return;
+    this.size = [width, height];
+    this.stage.resize(width, height);
+  }
+
+  /** Draws one frame. `performanceMs` is the frame's time. */
+  draw(performanceMs: number): void {
+    const known = this.fromHub() ?? this.kept;
+    if (!known) return;
+    const { state, manifest, map, name } = known;
+    if (map !== this.lastMap) {
+      this.lastMap = map;
+      this.draft = null;
+    }
+    if (manifest.revision !== this.revision) {
+      this.revision = manifest.revision;
+      this.bodies = sceneBodies(manifest);
+      this.files.want(manifest.assets);
+    }
+    this.fitWindow();
+    const shown = this.draft ?? map;
+    const t = this.link.hubTimeOf(performanceMs);
+    const assets = new Map(manifest.assets.map((asset) => [asset.id, asset]));
+    const screens = manifest.screens.filter(({ id }) =>
+      shown.regions.some((region) => region.screenId === id),
+    );
+    const frames = screens.map(({ id: screenId, width, height }) =>
+      evaluateScreen({ state, screenId, aspect: width / height, bodies: this.bodies, assets, t }),
+    );
+    this.stage.draw({
+      frames,
+      map: shown,
+      screenSizes: Object.fromEntries(screens.map((screen) => [screen.id, screen])),
+      hubNow: t,
+      paused: state.freeze.on,
+      lineUp: state.lineUp.includes(this.displayId),
+      label: (state.identify[this.displayId] ?? 0) > t ? name : null,
+    });
+    this.reportDrawn(frames, state, t);
+    if (!this.reading && performanceMs - this.readAt > small.everyMs) {
+      this.readAt = performanceMs;
+      void this.readSmall(t);
+    }
+  }
+
+  private async readSmall(at: number): Promise<void> {
+    this.reading = true;
+    try {
+      for (const one of await this.stage.readPictures(small.side)) {
+        this.changes.see(one);
+        const data = await pictureData(one);
+        if (data) this.link.reportPicture({ displayId: this.displayId, screenId: one.screenId, at, data });
+      }
+    } catch (error) {
+      this.onFault(error);
+    } finally {
+      this.reading = false;
+    }
+  }
+
+  dispose(): void {
+    this.stage.dispose();
+    this.files.dispose();
+  }
+}
