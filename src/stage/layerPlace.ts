@@ -43,6 +43,12 @@ export const layerMap = (
   };
 };
 
+/** Whether every point of the screen lies in the layer. */
+export const coversScreen = ({ across, down }: LayerMap): boolean =>
+  [across, down].every(([x, y, start]) =>
+    [start, start + x, start + y, start + x + y].every((at) => at > -1e-6 && at < 1 + 1e-6),
+  );
+
 /** Whether a layer covers its screen exactly, so that its picture can stand for it. */
 export const fillsScreen = ({ place }: Pick<DrawItem, 'place'>): boolean =>
   place.x === 0 && place.y === 0 && place.scale === 1 && place.turn === 0;

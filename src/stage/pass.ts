@@ -41,13 +41,13 @@ export const intoTexture = (target: RenderTexture): Output => ({
 });
 
 /** The whole canvas: v = 0 at its top. */
-export const overCanvas = (clear: boolean): Output => ({
+export const overCanvas: Output = {
   target: null,
   map: [2, 0, 0, 0, -2, 0, -1, 1, 1],
   part: whole,
   light: 1,
-  clear,
-});
+  clear: false,
+};
 
 export interface Pass {
   /** A vec4, or the vec4 at `index` of an array. Missing parts are 0. */

@@ -3,9 +3,9 @@ import type { DrawItem, DrawList, DrawSource, ScreenFrame } from '#shared/scene/
 import type { BlendMode, DrawingName } from '#shared/scene/schema';
 import { drawingFragment } from './drawings/drawingShaders';
 import type { LayerPictures } from './layerPictures';
-import { fillsScreen, layerMap, type Size } from './layerPlace';
+import { coversScreen, fillsScreen, type LayerMap, layerMap, type Size } from './layerPlace';
 import { createPass, intoTexture, type Output, type Pass } from './pass';
-import { composeFragment, slots } from './shaders/compose';
+import { type ComposeSlot, composeFragment, slots } from './shaders/compose';
 import { transitionFragment } from './shaders/output';
 import type { Targets } from './targets';
 
@@ -76,22 +76,33 @@ const createDrawings = (renderer: WebGLRenderer) => {
   };
 };
 
+/** A layer of a compose program as a word of its key, and back. */
+const slotWord = (mode: BlendMode, map: LayerMap | undefined): string =>
+  map && coversScreen(map) ? mode : `${mode}|edged`;
+const slotOf = (word: string): ComposeSlot => {
+  const [mode, edged] = word.split('|');
+  return { mode: mode as BlendMode, edged: edged !== undefined };
+};
+
 const createComposer = (renderer: WebGLRenderer) => {
   const passes = createStore(mostPrograms, (key) => {
-    const [start, ...modes] = key.split(' ');
+    const [start, ...layers] = key.split(' ');
     return createPass(renderer, {
-      fragment: composeFragment(modes as BlendMode[], start === 'base'),
+      fragment: composeFragment(layers.map(slotOf), start === 'base'),
       uniforms: { uGround: 1, uAcross: slots, uDown: slots, uSize: slots },
-      textures: [...(start === 'base' ? ['uBase'] : []), ...modes.map((_, i) => `uLayer${i}`)],
+      textures: [...(start === 'base' ? ['uBase'] : []), ...layers.map((_, i) => `uLayer${i}`)],
     });
   });
   return {
     ready(list: DrawList, base: RenderTexture | null, layers: readonly Laid[], screen: Size): Pass {
-      const pass = passes.of([base ? 'base' : 'ground', ...layers.map(({ item }) => item.blend)].join(' '));
+      const maps = layers.map(({ item, size }) => layerMap(item, size, screen));
+      const words = layers.map(({ item }, i) => slotWord(item.blend, maps[i]));
+      const pass = passes.of([base ? 'base' : 'ground', ...words].join(' '));
       pass.set('uGround', list.ground);
       if (base) pass.texture('uBase', base.source);
-      for (const [i, { item, source, size }] of layers.entries()) {
-        const map = layerMap(item, size, screen);
+      for (const [i, { item, source }] of layers.entries()) {
+        const map = maps[i];
+        if (!map) continue;
         pass.set('uAcross', [...map.across, item.opacity], i);
         pass.set('uDown', map.down, i);
         pass.set('uSize', [map.size.width, map.size.height], i);

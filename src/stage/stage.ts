@@ -22,7 +22,6 @@ interface Parts {
   kept: Kept;
   picture: Pass;
   over: Pass;
-  black: Pass;
   reader: Reader;
 }
 
@@ -30,12 +29,6 @@ interface Placed {
   region: Region;
   corners: Corners;
 }
-
-const blackFragment = `#version 300 es
-precision highp float;
-out vec4 outColour;
-void main() { outColour = vec4(0.0, 0.0, 0.0, 1.0); }
-`;
 
 /** Ms after which a reader of pictures no longer waits for the next frame: the last one is drawn again. */
 const redrawAfter = 120;
@@ -65,7 +58,6 @@ const build = async (canvas: HTMLCanvasElement, files: FileSource, size: Size): 
     kept: createKept(),
     picture: createPass(renderer, { fragment: pictureFragment, uniforms: {}, textures: ['uPicture'] }),
     over: createPass(renderer, { fragment: overFragment, uniforms: {}, textures: ['uPicture'] }),
-    black: createPass(renderer, { fragment: blackFragment, uniforms: {}, textures: [] }),
     reader: createReader(renderer),
   };
 };
@@ -121,7 +113,7 @@ const drawAll = (parts: Parts, input: StageInput): void => {
     region,
     corners: cornersOn(region, input.map.raster, size),
   }));
-  parts.black.draw(overCanvas(true));
+  parts.renderer.renderTarget.bind(parts.renderer.view.texture, true, [0, 0, 0, 1]);
   if (input.lineUp)
     for (const place of placed) drawGrid(parts, place, size, input.screenSizes[place.region.screenId]);
   else drawScreens(parts, input, placed, size);
@@ -133,7 +125,7 @@ const drawAll = (parts: Parts, input: StageInput): void => {
         drawLabel(label, size.width, size.height),
       ),
     );
-    parts.over.draw(overCanvas(false));
+    parts.over.draw(overCanvas);
     parts.over.release();
   }
   parts.pictures.tidy();
@@ -185,7 +177,7 @@ export const createStage = (canvas: HTMLCanvasElement, files: FileSource): Stage
   );
 
   const tearDown = (built: Parts): void => {
-    for (const part of [built.reader, built.painter, built.picture, built.over, built.black]) part.dispose();
+    for (const part of [built.reader, built.painter, built.picture, built.over]) part.dispose();
     for (const part of [built.pictures, built.kept, built.targets]) part.dispose();
     context.keepThrough(built.renderer);
     built.renderer.destroy();

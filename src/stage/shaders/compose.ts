@@ -44,11 +44,17 @@ const laid = (mode: BlendMode): string => {
     b = mix(b, ${formulas[mode].body}, drawn.a * a);`;
 };
 
-const slot = (mode: BlendMode, i: number): string => `
+/** One layer of a compose program. `edged`: some of the screen lies outside it. */
+export interface ComposeSlot {
+  mode: BlendMode;
+  edged: boolean;
+}
+
+const slot = ({ mode, edged }: ComposeSlot, i: number): string => `
   {
     vec2 at = vec2(dot(uAcross[${i}].xyz, here), dot(uDown[${i}].xyz, here));
-    vec2 edge = clamp(0.5 + (0.5 - abs(at - 0.5)) * uSize[${i}].xy, 0.0, 1.0);
-    float a = uAcross[${i}].w * edge.x * edge.y;
+    float a = uAcross[${i}].w;
+    ${edged ? `vec2 edge = clamp(0.5 + (0.5 - abs(at - 0.5)) * uSize[${i}].xy, 0.0, 1.0); a *= edge.x * edge.y;` : ''}
     vec4 drawn = texture(uLayer${i}, at);
     ${laid(mode)}
   }`;
@@ -57,9 +63,9 @@ const slot = (mode: BlendMode, i: number): string => `
  * Layers with these modes, back to front, over a ground or over what is drawn already. The backdrop is always opaque,
  * so co = (1 − as)·cb + as·B(cb, cs). A program holds only the formulas it needs: cards without skips run them all.
  */
-export const composeFragment = (modes: readonly BlendMode[], onBase: boolean): string => {
+export const composeFragment = (layers: readonly ComposeSlot[], onBase: boolean): string => {
   const needs = new Set(
-    modes.flatMap((mode) => (mode === 'normal' || mode === 'add' ? [] : (formulas[mode].needs ?? []))),
+    layers.flatMap(({ mode }) => (mode === 'normal' || mode === 'add' ? [] : (formulas[mode].needs ?? []))),
   );
   return `#version 300 es
 precision highp float;
@@ -70,12 +76,12 @@ uniform vec4 uAcross[${slots}]; // row of the map from screen to layer; w: opaci
 uniform vec4 uDown[${slots}];
 uniform vec4 uSize[${slots}]; // pixels of the layer, for a soft edge one pixel wide
 uniform sampler2D uBase;
-${modes.map((_, i) => `uniform sampler2D uLayer${i};`).join('\n')}
+${layers.map((_, i) => `uniform sampler2D uLayer${i};`).join('\n')}
 ${shownFunction}${[...needs].join('')}
 void main() {
   vec3 here = vec3(vUv, 1.0);
   vec3 b = ${onBase ? 'texture(uBase, vUv).rgb' : 'uGround.rgb'};
-${modes.map(slot).join('\n')}
+${layers.map(slot).join('\n')}
   outColour = shown(b);
 }
 `;
