@@ -4,6 +4,7 @@ import { type Phase, phasesSchema } from '#shared/api/shows';
 import { Button } from '@/components/Button';
 import { Problem } from '@/components/Problem';
 import { api } from '@/lib/api';
+import { newId } from '@/lib/newId';
 import { queryKeys } from '@/lib/queryKeys';
 import { inOrder } from './nightShape';
 import { PhaseRow } from './PhaseRow';
@@ -74,7 +75,7 @@ export const PhaseTable = ({ showId, phases, onDone, onDraft }: Props) => {
       )}
       {save.error && <Problem problem={save.error} />}
       <div className="flex flex-wrap gap-2">
-        <Button disabled={rows.length >= 12} onClick={() => change(addPhase(rows, crypto.randomUUID()))}>
+        <Button disabled={rows.length >= 12} onClick={() => change(addPhase(rows, newId()))}>
           Add a phase
         </Button>
         <span className="flex-1" />

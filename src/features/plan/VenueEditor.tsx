@@ -6,6 +6,7 @@ import { Button } from '@/components/Button';
 import { Field } from '@/components/Field';
 import { Problem } from '@/components/Problem';
 import { api } from '@/lib/api';
+import { newId } from '@/lib/newId';
 import { queryKeys } from '@/lib/queryKeys';
 import { GroupRows } from './GroupRows';
 import { ScreenRow } from './ScreenRow';
@@ -53,7 +54,7 @@ export const VenueEditor = ({ show, onDone, onDraft }: Props) => {
     if (read.success) save.mutate(read.data);
     else setFault(venueFault(venue.body, issue?.path ?? [], issue?.message ?? ''));
   };
-  const group = () => ({ id: crypto.randomUUID(), name: `Group ${venue.body.groups.length + 1}` });
+  const group = () => ({ id: newId(), name: `Group ${venue.body.groups.length + 1}` });
   return (
     <form
       noValidate
@@ -97,7 +98,7 @@ export const VenueEditor = ({ show, onDone, onDraft }: Props) => {
       <div className="flex flex-wrap gap-2">
         <Button
           disabled={venue.body.screens.length >= 32}
-          onClick={() => change(addScreen(venue.body, crypto.randomUUID()))}
+          onClick={() => change(addScreen(venue.body, newId()))}
         >
           Add a screen
         </Button>

@@ -1,6 +1,7 @@
 import { newLayer } from '#shared/scene/defaults';
 import type { Layer, SourceKind } from '#shared/scene/schema';
 import { Dialog } from '@/components/Dialog';
+import { newId } from '@/lib/newId';
 import { kindWords } from './layerWords';
 
 interface Props {
@@ -17,7 +18,7 @@ export const AddLayer = ({ open, onClose, onAdd }: Props) => (
         <li key={kind}>
           <button
             type="button"
-            onClick={() => onAdd(newLayer(kind, crypto.randomUUID()))}
+            onClick={() => onAdd(newLayer(kind, newId()))}
             className="h-full min-h-20 w-full rounded-xl bg-(--raised-2) p-4 text-left hover:bg-(--raised-3)"
           >
             <span className="block font-bold">{kindWords[kind].title}</span>

@@ -1,6 +1,5 @@
 import type { Asset } from '#shared/api/assets';
 import type { OutputMap } from '#shared/mapping/schema';
-import type { ManifestAsset } from '#shared/protocol/messages';
 import { evaluateScreen, sceneKey } from '#shared/scene/evaluate';
 import type { SceneBody } from '#shared/scene/schema';
 import { startState } from '#shared/show/reduce';
@@ -8,6 +7,7 @@ import type { SceneRun, ShowState } from '#shared/show/state';
 import { reanchor } from '#shared/time/beatClock';
 import { createFileStore } from '@/stage/fileStore';
 import { createStage } from '@/stage/stage';
+import { drawable } from './drawable';
 
 const screenId = 'preview';
 const draft = { id: 'draft', version: 1 } as const;
@@ -36,12 +36,6 @@ export interface PreviewInput {
   /** Width and height of the screen in metres. */
   size: { width: number; height: number };
 }
-
-/** Files that can be drawn, as displays get them. */
-export const drawable = (assets: readonly Asset[]): ManifestAsset[] =>
-  assets.flatMap(({ id, kind, url, bytes, width, height, durationS, fps }) =>
-    url && width && height ? [{ id, kind, url, bytes, width, height, durationS, fps }] : [],
-  );
 
 /** A raster in the screen's shape, no side longer than `side`. */
 export const rasterOf = ({ width, height }: { width: number; height: number }): [number, number] => {
