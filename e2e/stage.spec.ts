@@ -1,14 +1,8 @@
-import { execFileSync } from 'node:child_process';
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
-import { expect, type Page, test } from '@playwright/test';
+import { expect, test } from '@playwright/test';
 import type { Corners } from '#shared/mapping/schema';
 import { chance } from '#shared/scene/noise';
-import { type BlendMode, blendModes } from '#shared/scene/schema';
 import type { StagePage } from './stagePage/stagePage';
-import { blended } from './support/blendFormulas';
 import { openStagePage } from './support/stageBundle';
 import { watchConsole } from './support/watchConsole';
 
@@ -25,91 +19,8 @@ test.beforeEach(async ({ page }) => {
 });
 test.afterEach(() => check());
 
-/** Colours that try every formula's corners, then any: 64 of a seed. */
-const colours = (seed: number): number[][] => {
-  const ends = [0, 255, 128, 127, 64, 1, 254, 191];
-  return Array.from({ length: 64 }, (_, i) =>
-    i < 8
-      ? [ends[i] ?? 0, ends[(i + seed) % 8] ?? 0, ends[(i * 3 + seed) % 8] ?? 0, 255]
-      : [0, 1, 2].map((part) => Math.floor(chance(i, part, seed) * 256)).concat(255),
-  );
-};
-
-/** Draws one picture of 64 colours over another in a mode; gives the colours that come out. */
-const blendDrawn = (page: Page, mode: BlendMode, opacity: number): Promise<number[][]> =>
-  page.evaluate(
-    async ({ mode, opacity, below, above }) => {
-      await stagePage.columns('below', below);
-      await stagePage.columns('above', above);
-      const { canvas, stage } = stagePage.open(64, 32);
-      const list = stagePage.list([
-        stagePage.layer({ kind: 'picture', assetId: 'below' }),
-        stagePage.layer({ kind: 'picture', assetId: 'above' }, { blend: mode, opacity }),
-      ]);
-      const data = await stagePage.drawn(stage, canvas, stagePage.input(64, 32, [stagePage.frame(list)]));
-      stage.dispose();
-      const row = 16 * 64 * 4;
-      return Array.from({ length: 64 }, (_, x) => [...data.slice(row + x * 4, row + x * 4 + 3)]);
-    },
-    { mode, opacity, below: colours(1), above: colours(2) },
-  );
-
 const farthest = (a: readonly number[], b: readonly number[]): number =>
   Math.max(...a.map((value, i) => Math.abs(value - (b[i] ?? 0))));
-
-test('blends each mode as the W3C formulas say, opaque and half see-through', async ({ page }) => {
-  const [below, above] = [colours(1), colours(2)];
-  for (const mode of blendModes)
-    for (const opacity of [1, 0.6]) {
-      const drawn = (await blendDrawn(page, mode, opacity)).flat();
-      const wanted = below.flatMap((colour, i) =>
-        [0, 1, 2].map(
-          (part) => 255 * blended(mode, (colour[part] ?? 0) / 255, (above[i]?.[part] ?? 0) / 255, opacity),
-        ),
-      );
-      expect(farthest(drawn, wanted), `${mode} at ${opacity}`).toBeLessThanOrEqual(2);
-    }
-});
-
-test('blends as ffmpeg’s own filter does', async ({ page }) => {
-  const folder = mkdtempSync(join(tmpdir(), 'lampyrid-blend-'));
-  try {
-    const flat = (seed: number) => Buffer.from(colours(seed).flatMap((colour) => colour.slice(0, 3)));
-    writeFileSync(join(folder, 'below'), flat(1));
-    writeFileSync(join(folder, 'above'), flat(2));
-    const raw = (name: string) => [
-      '-f',
-      'rawvideo',
-      '-pix_fmt',
-      'gray',
-      '-s',
-      '192x1',
-      '-i',
-      join(folder, name),
-    ];
-    for (const mode of ['multiply', 'screen', 'overlay', 'difference'] as const) {
-      // The filter's first input decides in `overlay`, as the backdrop does.
-      const wanted = execFileSync('ffmpeg', [
-        ...['-loglevel', 'error', ...raw('below'), ...raw('above')],
-        ...[
-          '-filter_complex',
-          `blend=all_mode=${mode}`,
-          '-frames:v',
-          '1',
-          '-f',
-          'rawvideo',
-          '-pix_fmt',
-          'gray',
-          '-',
-        ],
-      ]);
-      const drawn = (await blendDrawn(page, mode, 1)).flat();
-      expect(farthest(drawn, [...wanted]), mode).toBeLessThanOrEqual(2);
-    }
-  } finally {
-    rmSync(folder, { recursive: true, force: true });
-  }
-});
 
 test('takes more layers than one pass holds, a see-through picture, and the light that is left', async ({
   page,
@@ -390,4 +301,26 @@ test('keeps nothing of scenes that are gone', async ({ page }) => {
   });
   expect(counts[2]).toBe(counts[0]);
   expect(counts[2]).toBeLessThan(150);
+});
+
+test('gives its canvas to a second stage, and the card back when it has gone', async ({ page }) => {
+  const got = await page.evaluate(async () => {
+    const { canvas, stage } = stagePage.open(64, 36);
+    const input = stagePage.input(64, 36, [stagePage.frame(stagePage.list([], [0, 1, 0]))]);
+    // A page in development mounts twice: the first stage ends before it has begun.
+    stage.dispose();
+    const second = stagePage.stageOn(canvas);
+    const one = [...(await stagePage.drawn(second, canvas, input)).slice(0, 3)];
+    second.dispose();
+    const third = stagePage.stageOn(canvas);
+    const two = [...(await stagePage.drawn(third, canvas, input)).slice(0, 3)];
+    await new Promise((done) => setTimeout(done, 1300));
+    const kept = canvas.getContext('webgl2')?.isContextLost();
+    const lost = new Promise((done) =>
+      canvas.addEventListener('webglcontextlost', () => done(true), { once: true }),
+    );
+    third.dispose();
+    return { one, two, kept, freed: await lost, pictures: await third.readPictures(64) };
+  });
+  expect(got).toEqual({ one: [0, 255, 0], two: [0, 255, 0], kept: false, freed: true, pictures: [] });
 });

@@ -21,6 +21,10 @@ const open = (width: number, height: number): { canvas: HTMLCanvasElement; stage
   return { canvas, stage };
 };
 
+/** A further stage on a canvas that had one. */
+const stageOn = (canvas: HTMLCanvasElement): Stage =>
+  createStage(canvas, { get: (id) => files.get(id) ?? null });
+
 const place = { x: 0, y: 0, scale: 1, turn: 0 };
 
 const layer = (source: DrawSource, more: Partial<DrawItem> = {}): DrawItem => ({
@@ -134,6 +138,7 @@ const columns = async (id: string, colours: readonly (readonly number[])[], heig
 export const stagePage = {
   files,
   open,
+  stageOn,
   layer,
   drawing,
   frame,

@@ -113,7 +113,11 @@ const drawAll = (parts: Parts, input: StageInput): void => {
     region,
     corners: cornersOn(region, input.map.raster, size),
   }));
-  parts.renderer.renderTarget.bind(parts.renderer.view.texture, true, [0, 0, 0, 1]);
+  parts.renderer.renderTarget.bind({
+    target: parts.renderer.view.texture,
+    clear: true,
+    clearColor: [0, 0, 0, 1],
+  });
   if (input.lineUp)
     for (const place of placed) drawGrid(parts, place, size, input.screenSizes[place.region.screenId]);
   else drawScreens(parts, input, placed, size);

@@ -16,7 +16,8 @@ vec3 draw(vec2 p, float aspect) {
       vec3 r = hash3(vec2(id, far * 9.1 + 2.0));
       float drop = mix(0.34, -0.32, r.y);
       float down = (p.y - drop) * scale;
-      if (down < -0.95) continue;
+      // A while that breaks is really skipped, also by software renderers.
+      while (down > -0.95) {
       vec2 at = vec2((id + 0.5 + 0.4 * (r.x - 0.5) - start) / columns, drop);
       float sway = (0.1 + 0.5 * B) * (swell(BEAT / 16.0 + r.x) - 0.5) * 0.5;
       at.x += sway * (0.5 - drop) * 0.5;
@@ -26,7 +27,7 @@ vec3 draw(vec2 p, float aspect) {
       colour = mix(colour, P1 * 1.2, line * 0.55 * dim);
       vec2 e = q / vec2(0.17, 0.2);
       float body = length(e);
-      if (body > 4.5) continue;
+      while (body < 4.5) {
       float breath = 0.68 + 0.37 * swell(BEAT / 8.0 + r.z);
       // Cells meet inside one pixel's neighbours, so the width of an edge comes from p, not from body.
       float soft = pixel * scale / 0.17;
@@ -40,6 +41,8 @@ vec3 draw(vec2 p, float aspect) {
       float out_ = max(body - 0.9, 0.0);
       float halo = max(0.0, 1.0 - out_ * 0.28);
       colour += P2 * (1.0 - inside) * breath * dim * (0.5 / (1.0 + 4.0 * out_ * out_)) * halo * halo;
+      break; }
+      break; }
     }
   }
   return colour;

@@ -18,7 +18,7 @@ vec3 draw(vec2 p, float aspect) {
     float off = abs(from.x * way.y - from.y * way.x);
     float width = 0.012 + 0.075 * along;
     float x = off / width;
-    if (along < 0.0 || x > 4.0) continue;
+    while (along > 0.0 && x < 4.0) {
     // A beam is a cone of even light with a soft rim, in a wide faint glow.
     float cone = 1.0 - smoothstep(0.35, 1.05, x);
     float inner = max(0.0, 1.0 - x * x * 2.5);
@@ -26,6 +26,7 @@ vec3 draw(vec2 p, float aspect) {
     float fall = (0.75 + 0.25 * swell(BEAT / 4.0 + k)) / (0.35 + 1.9 * along);
     body += (cone + 0.16 * glow * glow * glow) * fall;
     core += inner * inner * fall * fall;
+    break; }
   }
   colour += P2 * body * haze * 0.62 + P3 * core * (0.3 + 0.7 * haze) * 0.42;
   colour += mix(P2, P3, 0.5) * body * body * 0.05;
