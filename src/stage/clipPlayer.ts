@@ -1,24 +1,11 @@
 import { ImageSource } from 'pixi.js';
+import { correction, loopError } from './clipClock';
 
-/** How far a clip may be off before it is nudged, and before it is put to its place, seconds. */
-const nudgeable = 0.25;
-const nudge = 0.05;
 const defaultFps = 30;
 /** Least time between two seeks, ms: a seek needs time to land before its error counts. */
 const betweenSeeks = 400;
-
-/** What to do with a clip that is `error` seconds late (negative: early). Half a frame either way is on time. */
-export const correction = (error: number, fps: number): { seek: boolean; speed: number } => {
-  if (Math.abs(error) < 0.5 / fps) return { seek: false, speed: 1 };
-  if (Math.abs(error) < nudgeable) return { seek: false, speed: error > 0 ? 1 + nudge : 1 - nudge };
-  return { seek: true, speed: 1 };
-};
-
-/** Distance to a target on a loop of `length` seconds, the short way round: positive when the clip is late. */
-export const loopError = (target: number, at: number, length: number): number => {
-  const error = (((target - at) % length) + length) % length;
-  return error > length / 2 ? error - length : error;
-};
+/** A seek in a playing clip takes about this long (measured in software at 720p), so it aims ahead, seconds. */
+const seekLead = 0.06;
 
 export interface ClipPlayer {
   /** The newest frame, or null while there is none yet. */
@@ -75,7 +62,7 @@ export const createClipPlayer = (url: string, durationS: number, fps: number | n
       const { seek: far, speed } = correction(error, fps ?? defaultFps);
       const wanted = Math.min(4, Math.max(0.1, rate * speed));
       if (video.playbackRate !== wanted) video.playbackRate = wanted;
-      if (far && performance.now() - lastSeek > betweenSeeks) seek(positionS % length);
+      if (far && performance.now() - lastSeek > betweenSeeks) seek((positionS + seekLead * rate) % length);
       if (video.paused) video.play().catch(() => undefined);
     },
     rest() {

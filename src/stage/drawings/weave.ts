@@ -14,8 +14,8 @@ vec3 draw(vec2 p, float aspect) {
   float weft = (1.0 - edge(0.42, abs(f.y)));
   float runX = pow(0.5 + 0.5 * cos(TAU * (BEAT / 8.0 - q.y * 0.8 + 0.37 * hash1(vec2(id.x, SEED)))), 5.0);
   float runY = pow(0.5 + 0.5 * cos(TAU * (BEAT / 8.0 + q.x * 0.8 + 0.37 * hash1(vec2(SEED, id.y)))), 5.0);
-  vec3 a = (mix(P1, P2, body.x * 0.75) + P3 * runX * body.x * 0.8) * (0.55 + 0.45 * cos(f.y * 3.0));
-  vec3 b = (mix(P1 * 0.8, P2 * 0.7, body.y * 0.75) + P3 * runY * body.y * 0.6) * (0.55 + 0.45 * cos(f.x * 3.0));
+  vec3 a = (mix(P1, P2, body.x * 0.75) * 0.66 + P3 * runX * body.x * 0.8) * (0.55 + 0.45 * cos(f.y * 3.0));
+  vec3 b = (mix(P1 * 0.8, P2 * 0.7, body.y * 0.75) * 0.66 + P3 * runY * body.y * 0.6) * (0.55 + 0.45 * cos(f.x * 3.0));
   vec3 colour = P0;
   if (over > 0.5) { colour = mix(colour, b * 0.7, weft); colour = mix(colour, a, warp); }
   else { colour = mix(colour, a * 0.7, warp); colour = mix(colour, b, weft); }
