@@ -56,7 +56,13 @@ async function main(): Promise<void> {
   http.on('upgrade', (request, socket, head) => parts.hub.handleUpgrade(request, socket, head));
   await listen(http, config);
   const address = config.publicUrl ?? `http://127.0.0.1:${(http.address() as AddressInfo).port}`;
-  process.send?.({ type: 'ready', address, ...(await welcome(config, db, parts.context, address)) });
+  const told = { address, ...(await welcome(config, db, parts.context, address)) };
+  // Started by hand, nobody listens on the channel: then it is said aloud.
+  if (process.send) process.send({ type: 'ready', ...told });
+  else
+    process.stdout.write(
+      `${[told.address, told.setUpUrl, ...(told.lines ?? [])].filter(Boolean).join('\n')}\n`,
+    );
   await aborted(stopping.signal);
   await stop(http, parts, db);
   process.exit(0);
