@@ -1,161 +1,109 @@
-import { createHash, randomBytes } from 'node:crypto';
-import { readFile } from 'node:fs/promises';
-import { join } from 'node:path';
-import type { Database } from '#server/models/database';
 import type { DemoProgress } from '#shared/api/demo';
 import type { DemoCalls } from '../demoCalls';
+import { Fault } from '../fault';
 import type { HubCalls } from '../hubCalls';
 import type { Log } from '../log';
-import type { MediaCalls } from '../mediaCalls';
-import { makeBrand } from '../shows/brands';
-import { makeScene } from '../shows/scenes';
-import { makeShow } from '../shows/shows';
-import { makeVenue } from '../shows/venues';
-import { newId } from '../tokens';
-import { type DemoFile, demoFiles, demoNames, demoPalette, demoPhases, demoScenes, demoVenue } from './night';
-import { boathouseSvg, bottleSvg, markSvg, oarsSvg } from './pictures';
-import type { DemoClip, DemoTools } from './tools';
+import {
+  type DemoFile,
+  type DemoFileIds,
+  demoClips,
+  demoPictures,
+  demoRecipes,
+  type FileParts,
+  makeDemoFile,
+} from './demoFiles';
+import { findDemoShow, makeDemoScenes, makeDemoShow, markDemoMade, putClip } from './demoShow';
+import { DrawingFault } from './tools';
 
-export interface DemoParts {
-  db: Database;
-  media: MediaCalls;
+export interface DemoParts extends FileParts {
   hub: HubCalls;
   log: Log;
-  tools: DemoTools;
 }
 
-interface Recipe {
-  name: string;
-  kind: 'clip' | 'still' | 'mark';
-  clip?: DemoClip;
-  svg?: string;
+interface Who {
+  crewId: string;
+  userId: string | null;
 }
 
-const recipes: Record<DemoFile, Recipe> = {
-  mark: { name: 'Ottergate mark', kind: 'mark', svg: markSvg },
-  boathouse: { name: 'Boathouse at dusk', kind: 'still', svg: boathouseSvg },
-  oars: { name: 'Oars', kind: 'still', svg: oarsSvg },
-  bottle: { name: 'Bottle', kind: 'still', svg: bottleSvg },
-  water: { name: 'Water light', kind: 'clip', clip: 'water light' },
-  salt: { name: 'Salt glints', kind: 'clip', clip: 'salt glints' },
-  pour: { name: 'Cider pour', kind: 'clip', clip: 'cider pour' },
-};
-
-/** Pictures first: they are quick, and the clips are then converted while the next is drawn. */
-const order: readonly DemoFile[] = ['mark', 'boathouse', 'oars', 'bottle', 'water', 'salt', 'pour'];
+/** Told of each step: share done, words, and the show once it can be opened. */
+type Tell = (progress: number, words: string, showId?: string) => void;
 
 const none: DemoProgress = { state: 'none', progress: 0, words: 'Not made yet.', showId: null };
+const ready = (showId: string): DemoProgress => ({
+  state: 'ready',
+  progress: 1,
+  words: 'The night is ready.',
+  showId,
+});
+const stopped = 'The server was stopped while the demo night was being made.';
 
-/** The night that a show on this moment belongs to: until six in the morning it is still yesterday's. */
-export const nightOf = (at: Date): string => {
-  const night = new Date(at.getTime() - 6 * 3_600_000);
-  return [night.getFullYear(), night.getMonth() + 1, night.getDate()]
-    .map((part) => String(part).padStart(2, '0'))
-    .join('-');
-};
-
-/** Makes the demo night of a crew, once; what an interrupted making left is used. */
+/** Makes the demo night of a crew, once; what an interrupted try has left is used. */
 export function demoCalls(parts: DemoParts): DemoCalls {
   const now = new Map<string, DemoProgress>();
-  const made = async (crewId: string): Promise<DemoProgress> => {
-    const show = await parts.db.shows.findOne({ where: { crewId, name: demoNames.show } });
-    const scenes = show ? await parts.db.scenes.count({ where: { showId: show.id } }) : 0;
-    return show && scenes > 0
-      ? { state: 'ready', progress: 1, words: 'The night is ready.', showId: show.id }
-      : none;
+  const told = async (crewId: string): Promise<DemoProgress> => {
+    const show = await findDemoShow(parts.db, crewId);
+    if (!show) return none;
+    return show.whole ? ready(show.id) : { state: 'failed', progress: 0.5, words: stopped, showId: show.id };
   };
   return {
-    progress: async (crewId) => now.get(crewId) ?? made(crewId),
+    progress: async (crewId) => now.get(crewId) ?? told(crewId),
     make: (crewId, userId) => {
       const going = now.get(crewId);
-      if (going && going.state !== 'failed') return going;
-      const tell = (progress: number, words: string) =>
-        now.set(crewId, { state: 'working', progress, words, showId: null });
-      tell(0, 'Opening the boathouse');
-      made(crewId)
-        .then((found) => (found.showId ? found.showId : makeNight(parts, crewId, userId, tell)))
-        .then((showId) =>
-          now.set(crewId, { state: 'ready', progress: 1, words: 'The night is ready.', showId }),
-        )
-        .catch((error: unknown) => {
+      if (going?.state === 'working') return going;
+      const tell: Tell = (progress, words, showId) =>
+        now.set(crewId, { state: 'working', progress, words, showId: showId ?? null });
+      tell(0, 'Opening the boathouse …');
+      makeNight(parts, { crewId, userId }, tell).then(
+        // From here on the database knows.
+        () => now.delete(crewId),
+        (error: unknown) => {
           parts.log.error({ err: error }, 'the demo night was not made');
-          const words = 'The demo night could not be made. Try again; the log says more.';
-          now.set(crewId, { state: 'failed', progress: 0, words, showId: null });
-        });
+          const before = now.get(crewId) ?? none;
+          now.set(crewId, { ...before, state: 'failed', words: sentenceOf(error) });
+        },
+      );
       return now.get(crewId) ?? none;
     },
   };
 }
 
-type Tell = (progress: number, words: string) => void;
+const sentenceOf = (error: unknown): string =>
+  error instanceof DrawingFault || error instanceof Fault
+    ? `The demo night is not whole. ${error.message}`
+    : 'Something broke on our side while the demo night was being made.';
 
-async function makeNight(
-  parts: DemoParts,
-  crewId: string,
-  userId: string | null,
-  tell: Tell,
-): Promise<string> {
-  const { db, hub } = parts;
-  const ids = {} as Record<DemoFile, string>;
-  for (const [at, file] of order.entries()) {
-    const { name } = recipes[file];
-    tell(0.05 + (0.6 * at) / demoFiles.length, `Drawing “${name}”`);
-    ids[file] = await makeFile(parts, crewId, userId, file);
+/** Show and scenes come as soon as there are pictures; clips join their scenes one by one. */
+async function makeNight(parts: DemoParts, who: Who, tell: Tell): Promise<void> {
+  const { db, hub, media } = parts;
+  if ((await findDemoShow(db, who.crewId))?.whole) return;
+  const ids: DemoFileIds = {
+    ...{ mark: null, boathouse: null, oars: null, bough: null },
+    ...{ water: null, salt: null, static: null, pour: null },
+  };
+  tell(0.03, 'Drawing the mark and three pictures …');
+  for (const file of demoPictures) ids[file] = await makeDemoFile(parts, who, file);
+  tell(0.1, 'Hanging six screens and writing twelve scenes …');
+  const showId = await makeDemoShow(db, who, ids.mark);
+  await makeDemoScenes(db, who, showId, ids);
+  hub.manifestChanged(showId);
+  for (const [at, file] of demoClips.entries()) {
+    tell(
+      0.15 + at * 0.18,
+      `Drawing clip ${at + 1} of ${demoClips.length}: ${demoRecipes[file].name} …`,
+      showId,
+    );
+    ids[file] = await makeDemoFile(parts, who, file);
+    await putClip(db, who, showId, file, ids[file]);
+    hub.manifestChanged(showId);
   }
-  tell(0.7, 'Hanging six screens');
-  const venue =
-    (await db.venues.findOne({ where: { crewId, name: demoNames.venue } })) ??
-    (await makeVenue(db, crewId, { name: demoNames.venue, body: demoVenue }));
-  const brand =
-    (await db.brands.findOne({ where: { crewId, name: demoNames.client } })) ??
-    (await makeBrand(db, crewId, { name: demoNames.client, palette: demoPalette, markAssetId: ids.mark }));
-  for (const [at, file] of order.entries()) {
-    tell(0.72 + (0.2 * at) / order.length, `Converting “${recipes[file].name}”`);
-    const { state, fault } = await parts.media.settled(ids[file]);
-    if (state !== 'ready') throw new Error(`${recipes[file].name}: ${fault}`);
-  }
-  tell(0.94, 'Writing twelve scenes');
-  const phases = demoPhases.map((phase, position) => ({ ...phase, id: newId(), position }));
-  const facts = { venueId: venue.id, brandId: brand.id, client: demoNames.client };
-  const show = await makeShow(
-    db,
-    crewId,
-    { name: demoNames.show, date: nightOf(new Date()), ...facts },
-    phases,
-  );
-  for (const { name, phase, energy, body } of demoScenes(ids))
-    await makeScene(db, { crewId, userId }, show.id, {
-      name,
-      energy,
-      body,
-      phaseId: phases[phase]?.id ?? null,
-    });
-  hub.manifestChanged(show.id);
-  return show.id;
+  tell(0.9, 'Making the clips ready to play …', showId);
+  for (const file of [...demoPictures, ...demoClips]) await settle(media, file, ids[file]);
+  await markDemoMade(db, who, showId);
+  hub.manifestChanged(showId);
 }
 
-/** Draws one file and gives it to the Library; one that an earlier try has left is taken. */
-async function makeFile(
-  parts: DemoParts,
-  crewId: string,
-  userId: string | null,
-  file: DemoFile,
-): Promise<string> {
-  const { name, kind, clip, svg } = recipes[file];
-  const found = await parts.db.assets.findOne({ where: { crewId, name, kind } });
-  if (found && found.state !== 'failed') return found.id;
-  const path = join(parts.media.incomingFolder, randomBytes(9).toString('base64url'));
-  if (clip) await parts.tools.clip(clip, path);
-  else if (svg) await parts.tools.picture(svg, path);
-  const bytes = await readFile(path);
-  const asset = await parts.media.ingest({
-    crewId,
-    path,
-    originalName: `${name}.${clip ? 'mp4' : 'png'}`,
-    hash: createHash('sha256').update(bytes).digest('hex'),
-    bytes: bytes.length,
-    addedBy: userId,
-    kind,
-  });
-  return asset.id;
+async function settle(media: FileParts['media'], file: DemoFile, assetId: string | null): Promise<void> {
+  if (assetId === null) return;
+  const { state, fault } = await media.settled(assetId);
+  if (state !== 'ready') throw new DrawingFault(`“${demoRecipes[file].name}” was not made ready: ${fault}`);
 }

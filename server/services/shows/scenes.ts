@@ -139,7 +139,7 @@ export async function makeScene(
  */
 export async function saveScene(
   db: Database,
-  caller: Caller,
+  caller: Pick<Caller, 'crewId'> & { userId: string | null },
   id: string,
   draft: SceneDraft & { expectedVersion: number },
 ): Promise<Scene> {
