@@ -65,10 +65,7 @@ export const HandsetDesk = ({ night, skyline, leave }: Props) => {
       </div>
       <div className="handset-tiles">
         <PhaseRail night={night} />
-        <SceneTiles
-          night={night}
-          className="grid min-w-0 flex-1 auto-rows-[minmax(7rem,auto)] grid-cols-2 content-start gap-2 overflow-y-auto overscroll-contain [scrollbar-width:none]"
-        />
+        <SceneTiles night={night} grid="auto-rows-[minmax(7rem,auto)] grid-cols-2" />
         {more ? <MoreSheet night={night} leave={leave} onClose={() => setMore(false)} /> : null}
         <NoticeLine notice={night.notice} />
       </div>

@@ -60,7 +60,7 @@ export const LiveDesk = ({ night, skyline }: { night: Night; skyline: ReactNode 
         <SceneTiles
           night={night}
           digits
-          className="grid min-h-0 flex-1 auto-rows-[minmax(9rem,auto)] grid-cols-[repeat(auto-fill,minmax(12rem,1fr))] content-start gap-3 overflow-y-auto"
+          grid="auto-rows-[minmax(9rem,auto)] grid-cols-[repeat(auto-fill,minmax(12rem,1fr))]"
         />
         <NoticeLine notice={night.notice} />
         {help ? <KeyHelp onClose={() => setHelp(false)} /> : null}

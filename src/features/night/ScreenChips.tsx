@@ -25,7 +25,7 @@ export const ScreenChips = ({ night, wrap = false }: { night: Night; wrap?: bool
       type="button"
       aria-pressed={on}
       onClick={onClick}
-      className={`h-15 min-w-15 shrink-0 whitespace-nowrap rounded-full px-4 font-semibold text-[18px] -outline-offset-2 outline-[3px] ${
+      className={`${wrap ? 'h-12' : 'h-15'} min-w-15 shrink-0 whitespace-nowrap rounded-full px-4 font-semibold text-[18px] -outline-offset-2 outline-[3px] ${
         on
           ? 'bg-(--raised) text-(--text) outline-(--firefly)'
           : 'bg-(--raised-2) text-(--quiet) outline-transparent'

@@ -7,6 +7,7 @@ import type { SceneRun, ShowState } from '#shared/show/state';
 import { reanchor } from '#shared/time/beatClock';
 import { createFileStore } from '@/stage/fileStore';
 import { createStage } from '@/stage/stage';
+import { filesOf } from './bodyEdits';
 import { drawable } from './drawable';
 
 const screenId = 'preview';
@@ -73,6 +74,7 @@ export const startPreview = (canvas: HTMLCanvasElement, input: () => PreviewInpu
   const never = { on: false, at: Number.NEGATIVE_INFINITY };
   let state: ShowState = { ...startState('preview', 'live', 0), calm: never, blackout: never };
   let wanted: readonly Asset[] | null = null;
+  let seen: SceneBody | null = null;
   let size = '';
   let t = 0;
   let last: number | null = null;
@@ -82,9 +84,12 @@ export const startPreview = (canvas: HTMLCanvasElement, input: () => PreviewInpu
     const { body, assets, bpm, playing, size: metres } = input();
     if (playing && last !== null) t += performanceMs - last;
     last = performanceMs;
-    if (assets !== wanted) {
+    if (assets !== wanted || body !== seen) {
       wanted = assets;
-      files.want(drawable(assets));
+      seen = body;
+      // Only what this scene shows: a library may be gigabytes.
+      const used = new Set(filesOf(body));
+      files.want(drawable(assets).filter(({ id }) => used.has(id)));
     }
     const raster = rasterOf(metres);
     if (size !== raster.join('×')) {

@@ -41,7 +41,7 @@ const Running = ({ show }: { show: ShowDetail }) => {
               screenIds: toggleScreens(night.choices.screenIds, [id], ids),
             })
           }
-          maxHeight={220}
+          maxHeight={170}
           fontPx={16}
         />
       }
