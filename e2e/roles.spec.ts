@@ -12,9 +12,9 @@ test('an assistant is invited by mail, and is refused what is not theirs: on the
   const scene = await makeScene(call, show, 'Low tide', drawingBody('tide'));
 
   await signedIn.goto(`${house.address}/crew`);
-  await signedIn.getByLabel('Mail').fill('pip@crew.example');
+  await signedIn.getByRole('textbox', { name: 'Mail' }).fill('pip@crew.example');
   await signedIn.getByLabel('Role', { exact: true }).selectOption('assistant');
-  await signedIn.getByRole('button', { name: /invite/i }).click();
+  await signedIn.getByRole('button', { name: /^Invite|^Send/ }).click();
   await expect(signedIn.getByText('pip@crew.example')).toBeVisible();
   await signedIn.goto(`${house.address}/mail`);
   const link = await signedIn.getByRole('link', { name: /\/invite#/ }).getAttribute('href');
@@ -69,7 +69,8 @@ test('an assistant is invited by mail, and is refused what is not theirs: on the
   expect(answer).toMatchObject({ type: 'refused', commandId: 'not-mine', code: 'not-allowed' });
 
   await page.goto(`${house.address}/shows/${show.id}/handset`);
-  await page.getByRole('button', { name: /^Low tide/ }).click();
+  // It looks unready, and still says why when it is tapped.
+  await page.getByRole('button', { name: /^Low tide/ }).click({ force: true });
   await expect(page.getByText('Only lead and VJ fire')).toBeVisible();
   // Everyone in the crew may make the room dark.
   await page.getByRole('button', { name: 'Blackout' }).click();
