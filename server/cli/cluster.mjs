@@ -5,7 +5,7 @@ import { postgresFolder } from './debian.mjs';
 import { makeHome, postgresAccount } from './home.mjs';
 import { withLock } from './lock.mjs';
 import { launch, stopPostmaster } from './postmaster.mjs';
-import { commandOf, isAlive, processesIn, until } from './processes.mjs';
+import { commandOf, isAlive, processesIn, statOf, until } from './processes.mjs';
 import { Stop } from './say.mjs';
 
 const orphanLimitMs = 10_000;
@@ -113,5 +113,6 @@ async function clearOrphans(data) {
   if (!gone)
     throw new Stop(`Process ${processesIn(data)[0]} still works in ${data}. End it, then try again.`);
   const seen = readPostmaster(data);
-  if (seen && isAlive(seen.pid)) rmSync(join(data, 'postmaster.pid'), { force: true });
+  // A zombie counts too: PostgreSQL only asks whether the id exists, and some init programs are slow to bury their dead.
+  if (seen && statOf(seen.pid)) rmSync(join(data, 'postmaster.pid'), { force: true });
 }

@@ -4,7 +4,7 @@ export const hubLimits = {
   /** A receiver that has this much waiting is cut: it joins again and gets the newest state. */
   backlog: 1024 * 1024,
   sockets: 2000,
-  socketsPerAddress: 128,
+  socketsPerAddress: 1000,
   /** Unreadable messages after which a socket is closed. */
   junk: 10,
   commandsPerSecond: 40,
