@@ -77,7 +77,7 @@ const doors = ({ stills, mark, clip }: Files): DemoScene[] => [
     energy: 1,
     body: body(fade(8), [
       drawing('tide', 3, { a: 0.45, b: 0.75 }),
-      words('Salt & Static', cream, { place: place(0.46, 0, -0.2), opacity: 0.85 }, 300),
+      words('Salt & Static', cream, { place: place(0.34, 0, -0.22), opacity: 0.9 }, 300),
     ]),
   },
   {
@@ -164,7 +164,7 @@ const build = ({ stills, mark }: Files): DemoScene[] => [
         drawing('weave', 6, { a: 0.4, b: 0.7, palette: ['#02070a', '#0a3a40', '#1f9a8e', '#ffe2b8'] }),
         words('OTTERGATE', cream, {
           place: place(0.84),
-          blend: 'overlay',
+          blend: 'difference',
           pulse: breath('scale', 0.12, 4),
           dial: 0,
         }),
@@ -226,11 +226,11 @@ const peak = ({ clip, mark }: Files): DemoScene[] => [
     energy: 9,
     body: body(blinds(1), [
       drawing('ripple', 9, { a: 0.9, b: 0.35, palette: ['#0a0302', '#3a130a', amber, '#fff1d6'] }),
-      clip('static', 2, { blend: 'color-dodge', opacity: 0.8 }),
+      clip('static', 2, { blend: 'add' }),
       words(
         'STATIC',
-        cream,
-        { place: place(0.86), blend: 'soft-light', pulse: breath('opacity', 0.4, 2) },
+        '#e07a3c',
+        { place: place(0.86), blend: 'add', opacity: 0.9, pulse: breath('opacity', 0.5, 2) },
         800,
       ),
     ]),
@@ -243,9 +243,9 @@ const comedown = ({ clip, mark }: Files): DemoScene[] => [
     phase: 4,
     energy: 2,
     body: body(fade(16), [
-      clip('pour', 16, { opacity: 0.85 }),
-      mark('breathe', 0.4, { place: place(0.5, 0, -0.08), blend: 'screen', opacity: 0.95 }),
-      words('Get home safe', cream, { place: place(0.4, 0, 0.36) }, 500),
+      clip('pour', 16, { opacity: 0.45 }),
+      mark('breathe', 0.4, { place: place(0.54, 0, -0.12), opacity: 0.95 }),
+      words('Get home safe', cream, { place: place(0.24, 0, 0.34) }, 500),
     ]),
   },
 ];
