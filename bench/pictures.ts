@@ -94,13 +94,13 @@ async function takeNight(house: OpenHouse, at: string): Promise<void> {
   for (const [name, screenIds] of machines)
     displays.push(await house.join(name, raster, mapOf(house, screenIds)));
   // Each scene that was on the wall leaves its picture on its tile.
-  await fireFrom(house, `${at}/handset`, ['Static', 'Salt', 'Harbour lights'], 'handset');
+  await fireFrom(house, `${at}/handset`, ['Low tide', 'Lamps on the slip', 'Boathouse'], 'handset');
   await takePage(house, 'live', `${at}/live`, 'Live');
-  await fireFrom(house, `${at}/handset`, ['Boathouse']);
   await takePage(house, 'lookout', `${at}/lookout`, 'Lookout');
   await takePage(house, 'plan', at, 'Plan');
   await takePage(house, 'outputs', `${at}/outputs`, 'Outputs', async (page) => {
-    await page.getByText('Back wall', { exact: true }).last().click({ force: true });
+    const region = await page.getByText('Back wall', { exact: true }).last().boundingBox();
+    if (region) await page.mouse.click(region.x + region.width / 2, region.y - 30);
   });
   for (const page of displays) await page.context().close();
 }
