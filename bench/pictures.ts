@@ -99,8 +99,10 @@ async function takeNight(house: OpenHouse, at: string): Promise<void> {
   await takePage(house, 'lookout', `${at}/lookout`, 'Lookout');
   await takePage(house, 'plan', at, 'Plan');
   await takePage(house, 'outputs', `${at}/outputs`, 'Outputs', async (page) => {
-    const region = await page.getByText('Back wall', { exact: true }).last().boundingBox();
-    if (region) await page.mouse.click(region.x + region.width / 2, region.y - 30);
+    await page
+      .locator('polygon.cursor-move')
+      .first()
+      .click({ position: { x: 60, y: 60 } });
   });
   for (const page of displays) await page.context().close();
 }
