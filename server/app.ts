@@ -124,8 +124,23 @@ const identify =
 
 const immutable = 'public, max-age=31536000, immutable';
 
+/** Sends the gzipped copy of a script or style to browsers that take it; anything else goes on. */
+const squeezed =
+  (folder: string): RequestHandler =>
+  (request, response, next) => {
+    const name = String(request.params.name ?? '');
+    const takes = /^[\w.-]+\.(js|css)$/.test(name) && request.acceptsEncodings('gzip') === 'gzip';
+    if (!takes || !existsSync(join(folder, `${name}.gz`))) return next();
+    response.setHeader('content-encoding', 'gzip');
+    response.setHeader('vary', 'accept-encoding');
+    response.setHeader('cache-control', immutable);
+    response.type(name.endsWith('.js') ? 'text/javascript' : 'text/css');
+    response.sendFile(`${name}.gz`, { root: folder });
+  };
+
 /** Built pages: named after their content below /assets, so kept for good; the pages themselves never. */
 function servePages(app: Express, folder: string): void {
+  app.get('/assets/:name', squeezed(join(folder, 'assets')));
   app.use(
     '/assets',
     express.static(join(folder, 'assets'), {

@@ -3,6 +3,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { Stop, say, since } from './say.mjs';
+import { squeeze } from './squeeze.mjs';
 
 /** All that the built pages are made of. */
 const sources = [
@@ -10,6 +11,7 @@ const sources = [
   'display.html',
   'vite.config.ts',
   'package-lock.json',
+  'server/cli/squeeze.mjs',
   'src',
   'shared',
   'fonts',
@@ -30,6 +32,7 @@ export function ensureBuilt(root) {
   const words = [vite, 'build', '--logLevel', 'warn'];
   const done = spawnSync(process.execPath, words, { cwd: root, encoding: 'utf8' });
   if (done.status !== 0) throw new Stop(`The pages did not build:\n${done.stdout}${done.stderr}`);
+  squeeze(join(root, 'dist/assets'));
   writeFileSync(stamp, wanted);
   say(`Pages built in ${since(from)}.`);
 }

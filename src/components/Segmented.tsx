@@ -17,7 +17,7 @@ export const Segmented = <V extends string>({ label, options, value, onChange, b
         type="button"
         aria-pressed={option.value === value}
         onClick={() => onChange(option.value)}
-        className={`flex-1 rounded-lg px-3 whitespace-nowrap text-(--quiet) aria-pressed:bg-(--raised-3) aria-pressed:font-bold aria-pressed:text-(--text) ${big ? 'min-h-15 text-lg' : 'min-h-11'}`}
+        className={`min-w-0 flex-1 rounded-lg px-1 sm:px-3 sm:whitespace-nowrap text-(--quiet) aria-pressed:bg-(--raised-3) aria-pressed:font-bold aria-pressed:text-(--text) ${big ? 'min-h-15 text-lg' : 'min-h-11'}`}
       >
         {option.label}
       </button>

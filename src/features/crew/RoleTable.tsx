@@ -3,7 +3,8 @@ import { actWords, roleWords } from './roleWords';
 
 /** What each role may do, read from the table that every request is checked against. */
 export const RoleTable = () => (
-  <div className="overflow-x-auto">
+  // biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keys
+  <section tabIndex={0} aria-label="What each role may do" className="overflow-x-auto">
     <table className="w-full min-w-120 text-left">
       <caption className="sr-only">What each role may do</caption>
       <thead>
@@ -34,5 +35,5 @@ export const RoleTable = () => (
         ))}
       </tbody>
     </table>
-  </div>
+  </section>
 );

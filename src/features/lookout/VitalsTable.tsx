@@ -64,7 +64,12 @@ const heads = [
 
 /** Every display's vitals, each with the age of its last word. */
 export const VitalsTable = ({ snapshot, alarms, now }: Props) => (
-  <section className="overflow-x-auto rounded-xl bg-(--raised)" aria-label="Vitals of the displays">
+  <section
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: what scrolls must be reached by keys
+    tabIndex={0}
+    className="overflow-x-auto rounded-xl bg-(--raised)"
+    aria-label="Vitals of the displays"
+  >
     <table className="w-full min-w-[60rem] text-left">
       <thead>
         <tr className="text-sm text-(--quiet)">

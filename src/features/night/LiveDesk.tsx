@@ -19,7 +19,7 @@ import { useNightKeys } from './useNightKeys';
 
 /** The right hand side: time and light. */
 const Deck = ({ night, onHelp }: { night: Night; onHelp: () => void }) => (
-  <aside aria-label="Time and light" className="flex w-90 shrink-0 flex-col gap-3">
+  <aside aria-label="Time and light" className="flex min-w-0 shrink-0 flex-col gap-3 lg:w-90">
     <div className="flex gap-3">
       <TempoDisc night={night} className="h-29 w-36 shrink-0" />
       <div className="grid flex-1 grid-cols-1 gap-2">
@@ -50,7 +50,7 @@ export const LiveDesk = ({ night, skyline }: { night: Night; skyline: ReactNode 
   const wake = useWakeLock();
   useNightKeys(night, (wanted) => setHelp((open) => wanted === 'toggle' && !open));
   return (
-    <div className="relative flex h-[calc(100dvh-5.5rem)] min-h-150 select-none gap-4">
+    <div className="relative flex select-none flex-col gap-4 lg:h-[calc(100dvh-5.5rem)] lg:min-h-150 lg:flex-row">
       <div className="relative flex min-w-0 flex-1 flex-col gap-3">
         <NightHeader night={night} />
         <Bands bands={bandsOf(night.snapshot, wake, performance.now())} />

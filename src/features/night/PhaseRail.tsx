@@ -21,7 +21,7 @@ export const PhaseRail = ({ night, across = false }: Props) => {
       aria-label="Phases"
       className={
         across
-          ? 'flex gap-2'
+          ? 'flex flex-wrap gap-2'
           : 'flex w-27 shrink-0 flex-col gap-2 overflow-y-auto overscroll-contain [scrollbar-width:none]'
       }
     >

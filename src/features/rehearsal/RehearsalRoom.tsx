@@ -47,7 +47,7 @@ export const RehearsalRoom = ({ link, screens }: Props) => {
     }
   }, [link]);
   return (
-    <div className="flex flex-col gap-3">
+    <div className="flex min-w-0 flex-col gap-3">
       <div className="relative aspect-video w-full overflow-hidden rounded-xl bg-black">
         <canvas
           ref={canvas}

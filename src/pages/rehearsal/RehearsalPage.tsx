@@ -24,7 +24,7 @@ export const RehearsalPage = () => {
       links={showLinks(showId)}
     >
       <LinkBand snapshot={snapshot} />
-      <div className="grid gap-4 lg:grid-cols-[minmax(0,1fr)_18rem]">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-4 lg:grid-cols-[minmax(0,1fr)_18rem]">
         {!screens && <Loading label="The room" />}
         {screens && screens.length === 0 && (
           <Empty title="This venue has no screens yet">
