@@ -9,7 +9,8 @@ interface Props {
   assets: ReadonlyMap<string, Asset>;
   chosen: string | null;
   onChoose: (id: string) => void;
-  onBody: (body: SceneBody) => void;
+  /** Null for those who only look. */
+  onBody: ((body: SceneBody) => void) | null;
 }
 
 const small =
@@ -21,13 +22,13 @@ export const LayerList = ({ body, assets, chosen, onChoose, onBody }: Props) => 
   const layers = body.layers.map((layer, index) => ({ layer, index })).reverse();
   const keys = (event: KeyboardEvent, id: string, index: number) => {
     const step = { ArrowUp: 1, ArrowDown: -1 }[event.key];
-    if (!step || !event.altKey) return;
+    if (!onBody || !step || !event.altKey) return;
     event.preventDefault();
     onBody(moveLayer(body, id, index + step));
   };
   const drop = (event: DragEvent, index: number) => {
     event.preventDefault();
-    if (dragged) onBody(moveLayer(body, dragged, index));
+    if (dragged) onBody?.(moveLayer(body, dragged, index));
     setDragged(null);
   };
   return (
@@ -35,7 +36,7 @@ export const LayerList = ({ body, assets, chosen, onChoose, onBody }: Props) => 
       {layers.map(({ layer, index }) => (
         <li
           key={layer.id}
-          draggable
+          draggable={onBody !== null}
           onDragStart={() => setDragged(layer.id)}
           onDragOver={(event) => event.preventDefault()}
           onDrop={(event) => drop(event, index)}
@@ -57,24 +58,28 @@ export const LayerList = ({ body, assets, chosen, onChoose, onBody }: Props) => 
           <span className="hidden rounded-full bg-(--raised-3) px-3 py-1 text-sm sm:block">
             {layer.blend}
           </span>
-          <button
-            type="button"
-            className={small}
-            aria-label={`Bring ${layer.name} forward`}
-            disabled={index === body.layers.length - 1}
-            onClick={() => onBody(moveLayer(body, layer.id, index + 1))}
-          >
-            ↑
-          </button>
-          <button
-            type="button"
-            className={small}
-            aria-label={`Send ${layer.name} back`}
-            disabled={index === 0}
-            onClick={() => onBody(moveLayer(body, layer.id, index - 1))}
-          >
-            ↓
-          </button>
+          {onBody && (
+            <>
+              <button
+                type="button"
+                className={small}
+                aria-label={`Bring ${layer.name} forward`}
+                disabled={index === body.layers.length - 1}
+                onClick={() => onBody(moveLayer(body, layer.id, index + 1))}
+              >
+                ↑
+              </button>
+              <button
+                type="button"
+                className={small}
+                aria-label={`Send ${layer.name} back`}
+                disabled={index === 0}
+                onClick={() => onBody(moveLayer(body, layer.id, index - 1))}
+              >
+                ↓
+              </button>
+            </>
+          )}
         </li>
       ))}
     </ol>

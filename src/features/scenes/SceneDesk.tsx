@@ -1,11 +1,12 @@
 import { type KeyboardEvent, useEffect, useState } from 'react';
-import { useBlocker } from 'react-router-dom';
+import { useBlocker, useNavigate } from 'react-router-dom';
 import type { Asset } from '#shared/api/assets';
 import type { ShowDetail } from '#shared/api/shows';
 import type { Scene } from '#shared/scene/schema';
 import { Button } from '@/components/Button';
 import { Dialog } from '@/components/Dialog';
 import { Problem } from '@/components/Problem';
+import { paths } from '@/lib/paths';
 import { AddLayer } from './AddLayer';
 import { most } from './bodyEdits';
 import { Conflict } from './Conflict';
@@ -13,6 +14,7 @@ import { DialRows } from './DialRows';
 import { LayerList } from './LayerList';
 import { LayerPanel } from './LayerPanel';
 import { LivePicture } from './LivePicture';
+import { lackOf } from './lack';
 import { SceneFields } from './SceneFields';
 import { useSaveScene } from './useSaveScene';
 import { useSceneEditor } from './useSceneEditor';
@@ -24,6 +26,10 @@ interface Props {
   assets: readonly Asset[];
   mayEdit: boolean;
 }
+
+/** In text, the browser undoes the typing itself. */
+const isTyping = (target: EventTarget): boolean =>
+  target instanceof HTMLInputElement && !['range', 'color', 'checkbox'].includes(target.type);
 
 /** Says so before unsaved work is left, in the program and when the tab closes. */
 const useLeaveWarning = (dirty: boolean) => {
@@ -41,14 +47,15 @@ const useLeaveWarning = (dirty: boolean) => {
 export const SceneDesk = ({ scene, show, assets, mayEdit }: Props) => {
   const editor = useSceneEditor(scene);
   const saving = useSaveScene(scene, editor);
+  const go = useNavigate();
   const [adding, setAdding] = useState(false);
   const blocker = useLeaveWarning(editor.dirty && mayEdit);
   const { draft } = editor;
   const byId = new Map(assets.map((asset) => [asset.id, asset]));
-  const named = draft.name.trim() !== '';
+  const lack = lackOf(draft);
   const busy = saving.save.isPending || saving.theirs.isPending || saving.copy.isPending;
   const save = () => {
-    if (mayEdit && editor.dirty && named && !busy) saving.save.mutate(draft);
+    if (mayEdit && editor.dirty && !lack && !busy) saving.save.mutate(draft);
   };
   const keys = (event: KeyboardEvent) => {
     if (!(event.ctrlKey || event.metaKey)) return;
@@ -57,7 +64,7 @@ export const SceneDesk = ({ scene, show, assets, mayEdit }: Props) => {
       event.preventDefault();
       save();
     }
-    if (key !== 'z' || event.target instanceof HTMLInputElement) return;
+    if (key !== 'z' || isTyping(event.target)) return;
     event.preventDefault();
     if (event.shiftKey) editor.redo();
     else editor.undo();
@@ -81,7 +88,7 @@ export const SceneDesk = ({ scene, show, assets, mayEdit }: Props) => {
               <Button
                 variant="primary"
                 title="Ctrl+S"
-                disabled={!editor.dirty || !named || busy}
+                disabled={!editor.dirty || lack !== null || busy}
                 onClick={save}
               >
                 {saving.save.isPending ? 'Saving' : editor.dirty ? 'Save version' : 'Saved'}
@@ -89,15 +96,22 @@ export const SceneDesk = ({ scene, show, assets, mayEdit }: Props) => {
             </>
           )}
         </div>
+        {lack && mayEdit && <p className="text-(--amber)">▲ {lack}</p>}
         {saving.conflict && (
           <Conflict
             detail={saving.conflict.detail}
             busy={busy}
             onTheirs={() => saving.theirs.mutate()}
-            onCopy={() => saving.copy.mutate(draft)}
+            onCopy={() =>
+              saving.copy.mutate(draft, {
+                onSuccess: (made) => void go(paths.scene(made.showId, made.id)),
+              })
+            }
           />
         )}
         {saving.save.error && !saving.conflict && <Problem problem={saving.save.error} onRetry={save} />}
+        {saving.theirs.error && <Problem problem={saving.theirs.error} />}
+        {saving.copy.error && <Problem problem={saving.copy.error} />}
         {saving.take.error && <Problem problem={saving.take.error} />}
         <LivePicture body={draft.body} assets={assets} screens={show.venue?.body.screens ?? []} />
         {mayEdit && (
@@ -126,7 +140,7 @@ export const SceneDesk = ({ scene, show, assets, mayEdit }: Props) => {
           assets={byId}
           chosen={editor.chosen}
           onChoose={editor.setChosen}
-          onBody={(body) => mayEdit && editor.editBody(body)}
+          onBody={mayEdit ? (body) => editor.editBody(body) : null}
         />
         {editor.layer && mayEdit && (
           <LayerPanel
@@ -148,7 +162,7 @@ export const SceneDesk = ({ scene, show, assets, mayEdit }: Props) => {
           <Versions
             sceneId={scene.id}
             current={editor.version}
-            onTake={(version) => mayEdit && saving.take.mutate(version)}
+            onTake={mayEdit ? (version) => saving.take.mutate(version) : null}
           />
         </section>
       </aside>

@@ -10,7 +10,8 @@ import { momentWords } from '@/lib/words';
 interface Props {
   sceneId: string;
   current: number;
-  onTake: (version: number) => void;
+  /** Null for those who only look. */
+  onTake: ((version: number) => void) | null;
 }
 
 /** Every saved version; taking one puts it in the editor, and saving makes it the newest. */
@@ -37,9 +38,11 @@ export const Versions = ({ sceneId, current, onTake }: Props) => {
             {version === current ? (
               <span className="text-sm text-(--quiet)">saved now</span>
             ) : (
-              <Button onClick={() => onTake(version)} aria-label={`Go back to version ${version}`}>
-                Go back
-              </Button>
+              onTake && (
+                <Button onClick={() => onTake(version)} aria-label={`Go back to version ${version}`}>
+                  Go back
+                </Button>
+              )
             )}
           </li>
         ))}
