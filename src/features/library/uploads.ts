@@ -37,6 +37,15 @@ const faultOf = (request: XMLHttpRequest): string => {
     : `The server answered ${request.status}. Try again.`;
 };
 
+/** The new file; null when something between us and the server made the answer unreadable. */
+const assetOf = (request: XMLHttpRequest): Asset | null => {
+  try {
+    return JSON.parse(request.responseText) as Asset;
+  } catch {
+    return null;
+  }
+};
+
 /** Sends files one after the other, two at once; each can be stopped, and tried again. */
 export function makeUploads({ makeRequest, newId, onChange, onAsset }: UploadParts) {
   let list: readonly Upload[] = [];
@@ -70,8 +79,9 @@ export function makeUploads({ makeRequest, newId, onChange, onAsset }: UploadPar
     request.setRequestHeader('x-file-name', encodeURIComponent(name));
     request.upload.onprogress = ({ loaded, total }) => change(id, { share: total > 0 ? loaded / total : 0 });
     request.onload = () => {
-      if (request.status === 201) {
-        onAsset(JSON.parse(request.responseText) as Asset);
+      const asset = request.status === 201 ? assetOf(request) : null;
+      if (asset) {
+        onAsset(asset);
         finish(id, { state: 'done', share: 1 });
       } else finish(id, { state: 'failed', fault: faultOf(request) });
     };

@@ -33,7 +33,7 @@ const regionId = (map: OutputMap): string => {
 /** The output map of one display: picture, corners, region, versions. */
 export const OutputsDesk = ({ display, screens, link, snapshot }: Props) => {
   const client = useQueryClient();
-  const editor = useMapEditor(display.id, display.map, link);
+  const editor = useMapEditor(display.id, display.map, link, snapshot.status === 'on');
   const [said, setSaid] = useState<string | null>(null);
   const region = editor.map.regions.find((one) => one.id === editor.choice?.regionId);
   const lineUp = snapshot.state?.lineUp.includes(display.id) ?? false;

@@ -13,8 +13,9 @@ const convex = (map: OutputMap): boolean => map.regions.every((region) => isConv
  * The map of one display under the hand: history, choice, and drafts that go to the display as they happen.
  * @param displayId a new id starts anew
  * @param saved the newest saved map
+ * @param linked the hub is there: what was moved while it was away goes to the display then
  */
-export const useMapEditor = (displayId: string, saved: OutputMap, link: ShowLink | null) => {
+export const useMapEditor = (displayId: string, saved: OutputMap, link: ShowLink | null, linked: boolean) => {
   const [history, setHistory] = useState<MapHistory>(() => startHistory(saved));
   const [choice, setChoice] = useState<Choice | null>(null);
   const [refusal, setRefusal] = useState<string | null>(null);
@@ -50,6 +51,17 @@ export const useMapEditor = (displayId: string, saved: OutputMap, link: ShowLink
       setHistory(now);
     },
     [drafts],
+  );
+
+  useEffect(() => {
+    if (linked && isUnsaved(newest.current)) drafts.push(newest.current.present);
+  }, [linked, drafts]);
+  useEffect(
+    () => () => {
+      // Left without saving: the display goes back to what is saved.
+      if (isUnsaved(newest.current)) void link?.send({ kind: 'map.draft', displayId, map: known.current });
+    },
+    [link, displayId],
   );
 
   const edit = useCallback(

@@ -4,6 +4,10 @@ import { api, ProblemError } from '@/lib/api';
 import { queryKeys } from '@/lib/queryKeys';
 import type { Draft, SceneEditor } from './useSceneEditor';
 
+const ending = ' (copy)';
+/** A name for the copy that still says so when the name is as long as names may be (60). */
+const copyName = (name: string): string => `${name.slice(0, 60 - ending.length)}${ending}`;
+
 /** Saving, taking what another saved, going back to a version, and saving as a copy. */
 export const useSaveScene = (scene: Scene, editor: SceneEditor) => {
   const client = useQueryClient();
@@ -31,7 +35,7 @@ export const useSaveScene = (scene: Scene, editor: SceneEditor) => {
     mutationFn: (draft: Draft) =>
       api.post<Scene>(`/api/shows/${scene.showId}/scenes`, {
         ...draft,
-        name: `${draft.name} (copy)`.slice(0, 60),
+        name: copyName(draft.name),
       }),
     onSuccess: async (_made, draft) => {
       editor.markSaved(draft, editor.version);
