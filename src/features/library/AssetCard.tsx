@@ -56,7 +56,9 @@ export const AssetCard = ({ asset, mayEdit, problem, onRename, onKind, onRemove 
       data-asset={asset.id}
       data-state={asset.state}
     >
-      <div className="grid aspect-video place-items-center overflow-hidden rounded-xl bg-black">
+      <div
+        className={`grid aspect-video place-items-center overflow-hidden rounded-xl ${asset.state === 'ready' ? 'bg-black' : 'bg-(--raised-2)'}`}
+      >
         <Face asset={asset} />
       </div>
       {mayEdit ? (
@@ -84,7 +86,10 @@ export const AssetCard = ({ asset, mayEdit, problem, onRename, onKind, onRemove 
           {asset.uses.map(({ sceneId, sceneName, showId }, index) => (
             <span key={sceneId}>
               {index > 0 && ', '}
-              <Link className="underline" to={paths.scene(showId, sceneId)}>
+              <Link
+                className="inline-flex min-h-11 min-w-11 items-center underline"
+                to={paths.scene(showId, sceneId)}
+              >
                 {sceneName}
               </Link>
             </span>

@@ -38,7 +38,7 @@ export const SceneFields = ({ draft, phases, onDraft }: Props) => {
       />
       <NumberField
         label="Energy"
-        unit="of 10"
+        unit={'of\u00a010'}
         value={draft.energy}
         min={1}
         max={10}

@@ -39,10 +39,10 @@ export const SceneRow = (props: Props) => {
           to={paths.scene(scene.showId, scene.id)}
           className="flex min-h-11 items-center gap-3 text-lg font-bold"
         >
-          <span className="truncate">{scene.name}</span>
+          <span className="min-w-0 break-words">{scene.name}</span>
           <span className="shrink-0 font-mono text-sm font-normal text-(--quiet)">energy {scene.energy}</span>
         </Link>
-        <p className="truncate text-sm text-(--quiet)">
+        <p className="line-clamp-2 text-sm text-(--quiet)">
           {layers.length === 0
             ? 'nothing in it yet'
             : layers.map((layer) => sourceWords(layer.source, assets)).join(' over ')}

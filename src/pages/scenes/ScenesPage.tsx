@@ -121,7 +121,7 @@ export const ScenesPage = () => {
               {some.length === 0 ? (
                 <p className="text-sm text-(--quiet)">Nothing for this part of the night.</p>
               ) : (
-                <ul className="grid gap-2 xl:grid-cols-2">
+                <ul className="grid gap-2">
                   {some.map((scene) => (
                     <SceneRow
                       key={scene.id}
