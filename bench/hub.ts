@@ -143,6 +143,7 @@ async function main(): Promise<void> {
       cpuUsRatioToGeneral: ratio('cpuUsPerDelivery', 'socket.io'),
       p50Ms: round(of('hub', 'p50')),
       p99Ms: round(of('hub', 'p99')),
+      hubCpuUs: round(of('hub', 'cpuUsPerDelivery')),
       lost: figures.hub.reduce((sum, figure) => sum + figure.lost, 0),
     });
     process.stderr.write(`${JSON.stringify(rows.at(-1))}\n`);

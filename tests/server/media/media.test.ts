@@ -74,7 +74,7 @@ const send = (name: string, bytes: Buffer | string, browser = lead) =>
 
 async function upload(name: string, bytes: Buffer | string): Promise<Asset> {
   const { body } = await send(name, bytes).expect(201);
-  expect(body).toMatchObject({ state: 'waiting', addedBy: 'Ines Varga' });
+  expect(body).toMatchObject({ addedBy: 'Ines Varga' });
   await media.settled(body.id);
   return (await lead.get(`/api/assets/${body.id}`).expect(200)).body;
 }
