@@ -40,6 +40,7 @@ export const sceneRoutes = ({ db, hub }: RouteContext): Router => {
     async ({ caller, param, body }) => {
       const scene = await makeScene(db, caller, param('id'), body);
       hub.manifestChanged(scene.showId);
+      await audit(db, { caller, action: 'scene.edit', object: `${scene.id} made` });
       return scene;
     },
   );
@@ -52,6 +53,7 @@ export const sceneRoutes = ({ db, hub }: RouteContext): Router => {
     async ({ caller, param, body }) => {
       const scene = await saveScene(db, caller, param('id'), body);
       hub.manifestChanged(scene.showId);
+      await audit(db, { caller, action: 'scene.edit', object: `${scene.id} version ${scene.version}` });
       return scene;
     },
   );
@@ -70,6 +72,7 @@ export const sceneRoutes = ({ db, hub }: RouteContext): Router => {
     async ({ caller, param }) => {
       const showId = await setRemoved(db, caller.crewId, param('id'), false);
       hub.manifestChanged(showId);
+      await audit(db, { caller, action: 'scene.edit', object: `${param('id')} restored` });
       return readScene(db, caller.crewId, param('id'));
     },
   );
@@ -79,6 +82,7 @@ export const sceneRoutes = ({ db, hub }: RouteContext): Router => {
     async ({ caller, param }) => {
       const scene = await duplicateScene(db, caller, param('id'));
       hub.manifestChanged(scene.showId);
+      await audit(db, { caller, action: 'scene.edit', object: `${scene.id} copy of ${param('id')}` });
       return scene;
     },
   );

@@ -20,6 +20,7 @@ import type { RouteContext } from './context';
 import { route } from './route';
 
 const limitSchema = z.coerce.number().int().min(1).max(5000).catch(500);
+const afterSchema = z.coerce.number().catch(0);
 
 /** Shows: planning, copying, opening and closing a night, its phases and its as-run log. */
 export const showRoutes = (context: RouteContext): Router => {
@@ -51,6 +52,7 @@ function planRoutes(router: Router, { db, hub }: RouteContext): void {
     async ({ caller, param, body }) => {
       const show = await editShow(db, caller.crewId, param('id'), body);
       hub.manifestChanged(show.id);
+      await audit(db, { caller, action: 'show.edit', object: show.id });
       return show;
     },
   );
@@ -67,7 +69,11 @@ function planRoutes(router: Router, { db, hub }: RouteContext): void {
   route(
     router,
     { method: 'post', path: '/api/shows/:id/clone', action: 'show.make', body: cloneShowSchema, status: 201 },
-    ({ caller, param, body }) => cloneShow(db, caller, param('id'), body),
+    async ({ caller, param, body }) => {
+      const show = await cloneShow(db, caller, param('id'), body);
+      await audit(db, { caller, action: 'show.make', object: `${show.id} from ${param('id')}` });
+      return show;
+    },
   );
   route(
     router,
@@ -75,6 +81,7 @@ function planRoutes(router: Router, { db, hub }: RouteContext): void {
     async ({ caller, param, body }) => {
       const phases = await savePhases(db, caller.crewId, param('id'), body);
       hub.manifestChanged(param('id'));
+      await audit(db, { caller, action: 'show.edit', object: `${param('id')} phases` });
       return phases;
     },
   );
@@ -96,7 +103,13 @@ function nightRoutes(router: Router, { db, hub }: RouteContext): void {
     router,
     { method: 'get', path: '/api/shows/:id/as-run', action: 'asRun.read' },
     ({ caller, param, request }) =>
-      readAsRun(db, caller.crewId, param('id'), limitSchema.parse(request.query.limit)),
+      readAsRun(
+        db,
+        caller.crewId,
+        param('id'),
+        limitSchema.parse(request.query.limit),
+        afterSchema.parse(request.query.after),
+      ),
   );
   route(
     router,

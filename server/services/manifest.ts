@@ -4,9 +4,10 @@ import type { Asset } from '#server/models/asset';
 import type { Database } from '#server/models/database';
 import type { OutputMap } from '#shared/mapping/schema';
 import type { Manifest, ManifestAsset } from '#shared/protocol/messages';
-import type { Scene, SceneBody, Source } from '#shared/scene/schema';
+import type { Scene } from '#shared/scene/schema';
 import { newestMaps } from './displays/displays';
 import { listScenes } from './shows/scenes';
+import { assetsOfBody } from './shows/sourceFiles';
 
 /** What the hub needs to know of a show. */
 export interface HubShow {
@@ -17,17 +18,6 @@ export interface HubShow {
   displayNames: Record<string, string>;
   phaseIds: string[];
 }
-
-const filesOf = (source: Source): readonly string[] => {
-  if (source.kind === 'stills') return source.assetIds;
-  if (source.kind === 'clip' || source.kind === 'mark') return source.assetId ? [source.assetId] : [];
-  return [];
-};
-
-/** Ids of the files that a scene uses, each once. */
-export const assetsOfBody = (body: SceneBody): string[] => [
-  ...new Set(body.layers.flatMap((layer) => filesOf(layer.source))),
-];
 
 /** A file as displays know it; null while it is not ready. */
 const manifestAsset = (row: Asset): ManifestAsset | null => {

@@ -51,7 +51,10 @@ export const newShowSchema = z.object({
   brandId: idSchema.nullable().default(null),
   client: z.string().trim().max(60).default(''),
 });
-export const editShowSchema = newShowSchema.partial();
+/** What is left out stays as it is: so without the defaults of a new show. */
+export const editShowSchema = newShowSchema
+  .extend({ brandId: idSchema.nullable(), client: z.string().trim().max(60) })
+  .partial();
 export const cloneShowSchema = z.object({ name: z.string().trim().min(1).max(60), date: dateSchema });
 
 export const venueSchema = z.object({ id: idSchema, name: z.string(), body: venueBodySchema });

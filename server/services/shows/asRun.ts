@@ -1,16 +1,26 @@
+import { Op } from 'sequelize';
 import type { Database } from '#server/models/database';
 import type { AsRun } from '#shared/api/shows';
 import { findShow } from './shows';
 
-/** What displays reported as drawn in the real room, newest first. */
+/**
+ * What displays reported as drawn in the real room, newest first.
+ * @param limit most rows
+ * @param after only what was drawn after this hub time, ms
+ */
 export async function readAsRun(
   db: Database,
   crewId: string,
   showId: string,
   limit: number,
+  after: number,
 ): Promise<AsRun[]> {
   await findShow(db, crewId, showId);
-  const rows = await db.asRun.findAll({ where: { showId, room: 'live' }, order: [['at', 'DESC']], limit });
+  const rows = await db.asRun.findAll({
+    where: { showId, room: 'live', at: { [Op.gt]: after } },
+    order: [['at', 'DESC']],
+    limit,
+  });
   const [displays, scenes] = await Promise.all([
     db.displays.findAll({ where: { showId }, attributes: ['id', 'name'] }),
     db.scenes.findAll({ where: { showId }, attributes: ['id', 'name'] }),

@@ -39,7 +39,13 @@ export async function editBrand(db: Database, crewId: string, id: string, facts:
   return answerOf(await (await find(db, crewId, id)).update(facts));
 }
 
-/** Shows keep going without it. */
+export const readBrand = async (db: Database, crewId: string, id: string): Promise<Brand> =>
+  answerOf(await find(db, crewId, id));
+
+/** @throws Fault 409 while a show has it: past nights keep the brand they were played for */
 export async function deleteBrand(db: Database, crewId: string, id: string): Promise<void> {
-  await (await find(db, crewId, id)).destroy();
+  const row = await find(db, crewId, id);
+  const show = await db.shows.findOne({ where: { brandId: id } });
+  if (show) throw new Fault(409, `“${show.name}” has this brand.`, 'Give that show another brand first.');
+  await row.destroy();
 }

@@ -6,6 +6,7 @@ import type { Scene, SceneBody } from '#shared/scene/schema';
 import { Fault, notFound } from '../fault';
 import { newId } from '../tokens';
 import type { Caller } from '../who';
+import { filesOfSource } from './sourceFiles';
 
 /** What a person writes of a scene. */
 export interface SceneDraft {
@@ -77,17 +78,9 @@ async function refuseForeign(db: Database, crewId: string, showId: string, draft
       { path: 'phaseId', message: 'Not a phase of this show.' },
     ]);
   for (const [at, layer] of draft.body.layers.entries()) {
-    const { source } = layer;
-    const ids =
-      source.kind === 'stills'
-        ? source.assetIds
-        : source.kind === 'clip' || source.kind === 'mark'
-          ? source.assetId
-            ? [source.assetId]
-            : []
-          : [];
-    const known = ids.length === 0 ? 0 : await db.assets.count({ where: { crewId, id: [...new Set(ids)] } });
-    if (known !== new Set(ids).size)
+    const ids = [...new Set(filesOfSource(layer.source))];
+    const known = ids.length === 0 ? 0 : await db.assets.count({ where: { crewId, id: ids } });
+    if (known !== ids.length)
       throw new Fault(
         422,
         `Layer “${layer.name}” uses a file that is not in the Library.`,

@@ -149,10 +149,22 @@ export async function makeShow(
   return readShow(db, crewId, id);
 }
 
+/** A closed night is a record. */
+function refuseClosed(row: ShowRow): void {
+  if (row.mode === 'closed') throw new Fault(409, 'This night is closed.', 'Copy it to plan another.');
+}
+
 /** Changes what is known of a show; a closed night is a record and stays as it was. */
 export async function editShow(db: Database, crewId: string, id: string, facts: ShowFacts): Promise<Show> {
   const row = await findShow(db, crewId, id);
-  if (row.mode === 'closed') throw new Fault(409, 'This night is closed.', 'Copy it to plan another.');
+  refuseClosed(row);
+  if (row.mode === 'live' && facts.venueId === null)
+    throw new Fault(
+      409,
+      'This night is on: it needs its venue.',
+      'Choose another venue, or close it first.',
+      [{ path: 'venueId', message: 'Needed while the night is on.' }],
+    );
   await refuseForeign(db, crewId, facts);
   await row.update(facts);
   return readShow(db, crewId, id);
@@ -177,7 +189,7 @@ export async function setMode(
 ): Promise<Show> {
   const row = await findShow(db, crewId, id);
   if (act === 'open') {
-    if (row.mode === 'closed') throw new Fault(409, 'This night is closed.', 'Copy it to plan another.');
+    refuseClosed(row);
     if (!row.venueId) throw new Fault(409, 'This show has no venue.', 'Choose a venue on Plan first.');
     if (row.mode === 'plan') await row.update({ mode: 'live', openedAt: row.openedAt ?? new Date() });
   } else {
@@ -194,7 +206,7 @@ export async function savePhases(
   id: string,
   phases: readonly Phase[],
 ): Promise<Phase[]> {
-  await findShow(db, crewId, id);
+  refuseClosed(await findShow(db, crewId, id));
   const ids = new Set(phases.map((phase) => phase.id));
   if (ids.size !== phases.length)
     throw new Fault(422, 'Two phases have the same id.', 'Reload the page and try again.');
