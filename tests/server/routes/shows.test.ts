@@ -1,70 +1,20 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { accountRoutes } from '#server/routes/accounts';
-import { brandRoutes } from '#server/routes/brands';
-import { displayRoutes } from '#server/routes/displays';
-import { mailRoutes } from '#server/routes/mail';
 import { routeList } from '#server/routes/route';
-import { sceneRoutes } from '#server/routes/scenes';
-import { showRoutes } from '#server/routes/shows';
-import { venueRoutes } from '#server/routes/venues';
-import { setUpLink } from '#server/services/accounts/setUp';
-import { assetUses } from '#server/services/assetUses';
-import { showManifest } from '#server/services/manifest';
 import { type Phase, type ShowDetail, showDetailSchema } from '#shared/api/shows';
-import { newBody, newLayer } from '#shared/scene/defaults';
-import { type SceneBody, sceneSchema } from '#shared/scene/schema';
 import { may, roleTable } from '#shared/show/roles';
-import { type Browser, makeTestApp, type TestApp } from '#tests/make/app';
+import type { Browser } from '#tests/make/app';
 import { makeCrew, makeShow as makeForeignShow } from '#tests/make/crew';
-import { makeScreen } from '#tests/make/night';
+import { sceneDraft as draft, makePlanningHouse, type PlanningHouse, room } from '#tests/make/planning';
 
-let house: TestApp;
+let house: PlanningHouse;
 let lead: Browser;
-let crewId: string;
+let plan: PlanningHouse['plan'];
 
 beforeAll(async () => {
-  house = await makeTestApp([
-    accountRoutes,
-    mailRoutes,
-    showRoutes,
-    sceneRoutes,
-    venueRoutes,
-    brandRoutes,
-    displayRoutes,
-  ]);
-  lead = house.browser();
-  const token = await setUpLink(house.db);
-  const ines = { crewName: 'Boathouse crew', name: 'Ines Varga', email: 'ines@crew.example' };
-  const made = await lead.post('/api/setup', {
-    token,
-    ...ines,
-    password: 'salt static and otters',
-    demo: false,
-  });
-  crewId = made.body.crew.id;
+  house = await makePlanningHouse();
+  ({ lead, plan } = house);
 });
 afterAll(() => house.close());
-
-const room = { ambientLux: 30, screens: [makeScreen('back', 0), makeScreen('left', -4)], groups: [] };
-const bodyOf = (change: Partial<SceneBody> = {}): SceneBody => ({
-  ...newBody(),
-  layers: [newLayer('drawing', 'l1')],
-  ...change,
-});
-
-async function plan(): Promise<ShowDetail> {
-  const venue = await lead.post('/api/venues', { name: 'Boathouse 4', body: room }).expect(201);
-  const facts = {
-    name: 'Salt & Static',
-    date: '2026-12-05',
-    venueId: venue.body.id,
-    client: 'Ottergate Cider',
-  };
-  const show = await lead.post('/api/shows', facts).expect(201);
-  return (await lead.get(`/api/shows/${show.body.id}`).expect(200)).body;
-}
-
-const draft = (name: string, phaseId: string | null, body = bodyOf()) => ({ name, phaseId, energy: 5, body });
 
 describe('a show', () => {
   it('starts with a night of phases that flash three times a second at most', async () => {
@@ -126,100 +76,84 @@ describe('a show', () => {
     expect(scenes[0].phaseId).toBe(detail.phases[0]?.id);
     expect(detail.phases[0]?.id).not.toBe(show.phases[0]?.id);
   });
-});
 
-describe('a scene', () => {
-  it('is saved as versions, and an old one can be read again', async () => {
+  it('keeps client and brand when only its venue is given', async () => {
     const show = await plan();
-    const { body: made } = await lead.post(`/api/shows/${show.id}/scenes`, draft('Tide', null)).expect(201);
-    sceneSchema.parse(made);
-    const red = { ...draft('Tide in red', null, bodyOf({ ground: '#ff0000' })), expectedVersion: 1 };
-    expect((await lead.put(`/api/scenes/${made.id}`, red).expect(200)).body.version).toBe(2);
-    expect((await lead.get(`/api/scenes/${made.id}`)).body.body.ground).toBe('#ff0000');
-    expect((await lead.get(`/api/scenes/${made.id}/versions/1`)).body.body.ground).toBe('#000000');
-    const versions = (await lead.get(`/api/scenes/${made.id}/versions`)).body;
-    expect(versions.map((one: { version: number; by: string }) => [one.version, one.by])).toEqual([
-      [2, 'Ines Varga'],
-      [1, 'Ines Varga'],
-    ]);
+    const brand = await lead.post('/api/brands', { name: 'Ottergate', palette: [], markAssetId: null });
+    await lead.patch(`/api/shows/${show.id}`, { brandId: brand.body.id }).expect(200);
+    const { body } = await lead.patch(`/api/shows/${show.id}`, { venueId: show.venueId }).expect(200);
+    expect([body.client, body.brandName]).toEqual(['Ottergate Cider', 'Ottergate']);
   });
 
-  it('that somebody else has saved is not overwritten', async () => {
-    const show = await plan();
-    const { body: made } = await lead.post(`/api/shows/${show.id}/scenes`, draft('Tide', null)).expect(201);
-    const save = { ...draft('Tide', null), expectedVersion: 1 };
-    const both = await Promise.all([1, 2].map(() => lead.put(`/api/scenes/${made.id}`, save)));
-    expect(both.map(({ status }) => status).sort()).toEqual([200, 409]);
+  it('keeps its venue while it is on', async () => {
+    const { id } = await plan();
+    await lead.post(`/api/shows/${id}/open`).expect(200);
+    const answer = await lead.patch(`/api/shows/${id}`, { venueId: null });
+    expect([answer.status, answer.body.fields[0]?.path]).toEqual([409, 'venueId']);
+    await lead.patch(`/api/shows/${id}`, { name: 'Louder' }).expect(200);
   });
 
-  it('comes back after it was removed', async () => {
-    const show = await plan();
-    const { body: made } = await lead.post(`/api/shows/${show.id}/scenes`, draft('Tide', null)).expect(201);
-    await lead.delete(`/api/scenes/${made.id}`).expect(204);
-    await lead.get(`/api/scenes/${made.id}`).expect(404);
-    await lead.post(`/api/scenes/${made.id}/restore`).expect(200);
-    await lead.get(`/api/scenes/${made.id}`).expect(200);
+  it('keeps its phases once it is closed', async () => {
+    const { id, phases } = await plan();
+    for (const act of ['open', 'close']) await lead.post(`/api/shows/${id}/${act}`).expect(200);
+    const answer = await lead.put(`/api/shows/${id}/phases`, phases.slice(0, 1));
+    expect([answer.status, answer.body.detail]).toEqual([409, 'This night is closed.']);
   });
 
-  it('names the field that is out of range', async () => {
-    const show = await plan();
-    const layer = { ...newLayer('drawing', 'l1'), opacity: 7 };
-    const answer = await lead.post(
-      `/api/shows/${show.id}/scenes`,
-      draft('X', null, bodyOf({ layers: [layer] })),
+  it('is not the assistant’s to change, nor a VJ’s to delete', async () => {
+    const { id } = await plan();
+    await house.as('assistant', async () => {
+      await lead.get(`/api/shows/${id}`).expect(200);
+      await lead.patch(`/api/shows/${id}`, { name: 'X' }).expect(403);
+    });
+    await house.as('vj', () => lead.delete(`/api/shows/${id}`).expect(403));
+    await lead.delete(`/api/shows/${id}`).expect(204);
+  });
+
+  it('takes no phases of another show', async () => {
+    const [one, other] = [await plan(), await plan()];
+    const answer = await lead.put(`/api/shows/${one.id}/phases`, other.phases);
+    expect([answer.status, answer.body.detail]).toEqual([422, 'A phase belongs to another show.']);
+  });
+
+  it('writes down who changed it', async () => {
+    const { id, phases, venueId } = await plan();
+    await lead.patch(`/api/shows/${id}`, { name: 'Louder' }).expect(200);
+    await lead.put(`/api/shows/${id}/phases`, phases).expect(200);
+    const copy = await lead.post(`/api/shows/${id}/clone`, { name: 'Again', date: '2026-12-12' });
+    await lead.put(`/api/venues/${venueId}`, { name: 'Boathouse', body: room }).expect(200);
+    const entries = await house.db.auditEntries.findAll({ order: [['id', 'ASC']] });
+    const said = entries.map(({ action, object }) => `${action} ${object}`);
+    expect(said).toEqual(
+      expect.arrayContaining([
+        `show.make ${id}`,
+        `show.edit ${id}`,
+        `show.edit ${id} phases`,
+        `show.make ${copy.body.id} from ${id}`,
+        `venue.edit ${venueId}`,
+      ]),
     );
-    expect(answer.status).toBe(422);
-    expect(answer.body.fields[0].path).toBe('body.layers.0.opacity');
-  });
-
-  it('uses files of the Library only', async () => {
-    const show = await plan();
-    const layer = {
-      ...newLayer('clip', 'l1'),
-      source: { kind: 'clip', assetId: 'nowhere', rate: 1, fitBars: null },
-    };
-    const answer = await lead.post(`/api/shows/${show.id}/scenes`, {
-      ...draft('X', null),
-      body: { ...newBody(), layers: [layer] },
-    });
-    expect(answer.body.fields).toEqual([{ path: 'body.layers.0.source', message: 'Not in the Library.' }]);
   });
 });
 
-describe('the manifest', () => {
-  it('has screens, newest scenes and ready files, and the same revision for the same content', async () => {
-    const show = await plan();
-    const file = {
-      crewId,
-      kind: 'clip' as const,
-      name: 'clip',
-      file: `${'a'.repeat(64)}.mp4`,
-      width: 640,
-      height: 360,
-    };
-    await house.db.assets.create({
-      ...file,
-      id: 'ready-1',
-      state: 'ready',
-      bytes: 10,
-      durationS: 2,
-      fps: 25,
-    });
-    await house.db.assets.create({ ...file, id: 'waiting-1', state: 'waiting' });
-    const layers = ['ready-1', 'waiting-1'].map((assetId) => ({
-      ...newLayer('clip', assetId),
-      source: { kind: 'clip' as const, assetId, rate: 1, fitBars: null },
-    }));
-    await lead.post(`/api/shows/${show.id}/scenes`, draft('Clip', null, bodyOf({ layers }))).expect(201);
-    const first = await showManifest(house.db, show.id);
-    expect(first?.manifest.screens.map(({ id }) => id)).toEqual(['back', 'left']);
-    expect(first?.manifest.assets).toMatchObject([{ id: 'ready-1', url: `/media/${'a'.repeat(64)}.mp4` }]);
-    expect((await showManifest(house.db, show.id))?.manifest.revision).toBe(first?.manifest.revision);
-    await house.db.assets.update({ state: 'ready' }, { where: { id: 'waiting-1' } });
-    expect((await showManifest(house.db, show.id))?.manifest.revision).not.toBe(first?.manifest.revision);
-    expect((await assetUses(house.db, crewId)).get('ready-1')).toMatchObject([
-      { sceneName: 'Clip', showId: show.id },
-    ]);
+describe('the as-run log', () => {
+  it('is read newest first, so many at most, and after a moment', async () => {
+    const { id } = await plan();
+    const { body: scene } = await lead.post(`/api/shows/${id}/scenes`, draft('Low tide')).expect(201);
+    const facts = { showId: id, room: 'live' as const, displayId: 'gone', screenId: 'back', lateMs: 3 };
+    for (const seq of [1, 2, 3])
+      await house.db.asRun.create({ ...facts, seq, at: seq * 1000, sceneId: scene.id, sceneVersion: 1 });
+    await house.db.asRun.create({ ...facts, room: 'rehearsal', seq: 4, at: 4000 });
+    const times = async (query: string) =>
+      (await lead.get(`/api/shows/${id}/as-run${query}`).expect(200)).body.map(
+        ({ at }: { at: number }) => at,
+      );
+    expect(await times('')).toEqual([3000, 2000, 1000]);
+    expect(await times('?limit=1')).toEqual([3000]);
+    expect(await times('?after=1000')).toEqual([3000, 2000]);
+    expect(await times('?limit=many&after=then')).toEqual([3000, 2000, 1000]);
+    const [newest] = (await lead.get(`/api/shows/${id}/as-run`)).body;
+    expect(newest).toMatchObject({ sceneName: 'Low tide', displayName: 'a display that was forgotten' });
   });
 });
 
@@ -234,6 +168,65 @@ describe('a venue', () => {
     const groups = [{ id: 'g', name: 'Sails', screenIds: ['moon'] }];
     const answer = await lead.post('/api/venues', { name: 'X', body: { ...room, groups } });
     expect(answer.body.fields[0].path).toBe('body.groups.0.screenIds');
+  });
+
+  it('of another crew can be neither read, changed, removed nor chosen', async () => {
+    const other = await makeCrew(house.db);
+    const { id } = await house.db.venues.create({
+      id: 'foreign-venue',
+      crewId: other.crewId,
+      name: 'X',
+      body: room,
+    });
+    await lead.get(`/api/venues/${id}`).expect(404);
+    await lead.put(`/api/venues/${id}`, { name: 'Mine', body: room }).expect(404);
+    await lead.delete(`/api/venues/${id}`).expect(404);
+    const answer = await lead.post('/api/shows', { name: 'X', date: '2026-12-05', venueId: id });
+    expect([answer.status, answer.body.fields[0].path]).toEqual([422, 'venueId']);
+  });
+
+  it('tells its shows when it changes', async () => {
+    const show = await plan();
+    await lead.put(`/api/venues/${show.venueId}`, { name: 'Boathouse 4', body: room }).expect(200);
+    expect(house.told.at(-1)).toEqual(['manifestChanged', show.id]);
+  });
+});
+
+describe('a brand', () => {
+  const facts = { name: 'Ottergate', palette: ['#d3f84b'], markAssetId: null };
+
+  it('is made, read, changed and removed', async () => {
+    const { body: made } = await lead.post('/api/brands', facts).expect(201);
+    await lead.put(`/api/brands/${made.id}`, { ...facts, name: 'Ottergate Cider' }).expect(200);
+    expect((await lead.get(`/api/brands/${made.id}`)).body.name).toBe('Ottergate Cider');
+    await lead.delete(`/api/brands/${made.id}`).expect(204);
+    await lead.get(`/api/brands/${made.id}`).expect(404);
+  });
+
+  it('in use is not deleted and tells its show', async () => {
+    const show = await plan();
+    const { body: made } = await lead.post('/api/brands', facts).expect(201);
+    await lead.patch(`/api/shows/${show.id}`, { brandId: made.id }).expect(200);
+    const answer = await lead.delete(`/api/brands/${made.id}`);
+    expect([answer.status, answer.body.detail]).toEqual([409, '“Salt & Static” has this brand.']);
+  });
+
+  it('of another crew is not there', async () => {
+    const other = await makeCrew(house.db);
+    const { id } = await house.db.brands.create({
+      id: 'foreign-brand',
+      crewId: other.crewId,
+      name: 'Theirs',
+      palette: [],
+    });
+    await lead.get(`/api/brands/${id}`).expect(404);
+    await lead.put(`/api/brands/${id}`, facts).expect(404);
+    await lead.delete(`/api/brands/${id}`).expect(404);
+  });
+
+  it('has a mark of the Library only', async () => {
+    const answer = await lead.post('/api/brands', { ...facts, markAssetId: 'nowhere' });
+    expect([answer.status, answer.body.fields[0].path]).toEqual([422, 'markAssetId']);
   });
 });
 
