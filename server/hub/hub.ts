@@ -104,8 +104,7 @@ export function createHub(options: HubOptions): Hub {
   }, linkTimes.heartbeat);
   sweep.unref();
 
-  const seatAt = (socket: WebSocket, who: SocketCaller, query: Query, room: Room, address: string) => {
-    const seat = makeSeat(socket, who, query.show, query.room, hubNow());
+  const seatAt = (socket: WebSocket, seat: Seat, room: Room, address: string) => {
     seats.add(seat);
     byAddress.set(address, (byAddress.get(address) ?? 0) + 1);
     socket.on('error', (error) => log.debug({ err: error }, 'socket'));
@@ -136,7 +135,10 @@ export function createHub(options: HubOptions): Hub {
     if (!show || (who.kind === 'crew' && who.crewId !== show.crewId))
       return turnAway(socket, 404, 'There is no such show.');
     const room = await roomOf(query.data.show, query.data.room);
-    sockets.handleUpgrade(request, socket, head, (made) => seatAt(made, who, query.data, room, address));
+    sockets.handleUpgrade(request, socket, head, (made) => {
+      const seat = makeSeat(made, socket, who, query.data.show, query.data.room, hubNow());
+      seatAt(made, seat, room, address);
+    });
   };
 
   return {

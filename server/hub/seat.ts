@@ -1,3 +1,4 @@
+import type { Duplex } from 'node:stream';
 import type { WebSocket } from 'ws';
 import type { SocketCaller } from '#server/services/socketCaller';
 import type { FromHub } from '#shared/protocol/messages';
@@ -31,12 +32,36 @@ export interface Seat {
   cut: () => void;
 }
 
-/** Makes one frame of a message; every receiver gets the same bytes. */
-export const encode = (message: FromHub): Buffer => Buffer.from(JSON.stringify(message));
+/**
+ * Makes one whole text frame of a message, so that every receiver gets the very same bytes in one write: final, unmasked,
+ * opcode 1, length in 7, 16 or 64 bits. RFC 6455 section 5.2.
+ */
+export function encode(message: FromHub): Buffer {
+  const text = JSON.stringify(message);
+  const length = Buffer.byteLength(text);
+  const head = length < 126 ? 2 : length < 65_536 ? 4 : 10;
+  const frame = Buffer.allocUnsafe(head + length);
+  frame[0] = 0x81;
+  if (head === 2) frame[1] = length;
+  else if (head === 4) {
+    frame[1] = 126;
+    frame.writeUInt16BE(length, 2);
+  } else {
+    frame[1] = 127;
+    frame.writeBigUInt64BE(BigInt(length), 2);
+  }
+  frame.write(text, head);
+  return frame;
+}
 
-/** A seat for a socket that the hub has let in. `now` in ms. */
+/**
+ * A seat for a socket that the hub has let in.
+ * @param wire what the socket writes to; nothing is ever compressed, so whole frames of ours may go between its own
+ * @param now ms
+ */
 export function makeSeat(
   socket: WebSocket,
+  wire: Duplex,
   who: SocketCaller,
   showId: string,
   room: RoomKind,
@@ -45,8 +70,8 @@ export function makeSeat(
   const sendFrame = (frame: Buffer): void => {
     if (socket.readyState !== socket.OPEN) return;
     // Whoever reads too slowly joins anew: a queue of old news helps nobody.
-    if (socket.bufferedAmount > hubLimits.backlog) return socket.terminate();
-    socket.send(frame, { binary: false, compress: false });
+    if (wire.writableLength > hubLimits.backlog) return socket.terminate();
+    wire.write(frame);
   };
   return {
     who,
