@@ -211,7 +211,7 @@ describe('a brand', () => {
     expect([answer.status, answer.body.detail]).toEqual([409, '“Salt & Static” has this brand.']);
   });
 
-  it('of another crew is not there', async () => {
+  it('of another crew is not there either', async () => {
     const other = await makeCrew(house.db);
     const { id } = await house.db.brands.create({
       id: 'foreign-brand',
