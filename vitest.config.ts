@@ -8,8 +8,8 @@ export default defineConfig({
     globalSetup: ['tests/globalSetup.ts'],
     setupFiles: ['tests/setup.ts'],
     maxWorkers: 2,
-    testTimeout: 20_000,
-    hookTimeout: 60_000,
+    testTimeout: 60_000,
+    hookTimeout: 120_000,
     allowOnly: false,
   },
 });

@@ -189,9 +189,10 @@ export async function setMode(
 ): Promise<Show> {
   const row = await findShow(db, crewId, id);
   if (act === 'open') {
-    refuseClosed(row);
     if (!row.venueId) throw new Fault(409, 'This show has no venue.', 'Choose a venue on Plan first.');
-    if (row.mode === 'plan') await row.update({ mode: 'live', openedAt: row.openedAt ?? new Date() });
+    // Closed by mistake at two in the morning: the same night goes on, under the time it was first opened.
+    if (row.mode !== 'live')
+      await row.update({ mode: 'live', openedAt: row.openedAt ?? new Date(), closedAt: null });
   } else {
     if (row.mode === 'plan') throw new Fault(409, 'This night has not been opened.', 'Open it first.');
     if (row.mode === 'live') await row.update({ mode: 'closed', closedAt: new Date() });

@@ -49,6 +49,8 @@ describe('a show', () => {
     expect((await lead.post(`/api/shows/${id}/close`).expect(200)).body.mode).toBe('closed');
     await lead.patch(`/api/shows/${id}`, { name: 'Other' }).expect(409);
     expect(house.told).toContainEqual(['modeChanged', id, 'closed']);
+    const again = (await lead.post(`/api/shows/${id}/open`).expect(200)).body;
+    expect([again.mode, again.closedAt]).toEqual(['live', null]);
   });
 
   it('keeps scenes with the phases that stay', async () => {
