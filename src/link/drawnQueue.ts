@@ -36,7 +36,7 @@ export class DrawnQueue {
       if (typeof parsed === 'object' && parsed !== null && 'seq' in parsed && 'list' in parsed)
         return parsed as Kept;
     } catch {
-      // Unreadable: begin anew, under numbers that the log has not seen.
+      // Unreadable: begin anew. The log tells equal numbers apart by their times.
     }
     return { seq: 0, list: [] };
   }
@@ -56,11 +56,13 @@ export class DrawnQueue {
     this.write();
   }
 
-  /** The log has all of a display's reports up to this number. */
-  logged(displayId: string, seq: number): void {
+  /** The log has all of a display's reports up to this number. True when that was news and more reports wait. */
+  logged(displayId: string, seq: number): boolean {
     const before = this.list.length;
     this.list = this.list.filter((drawn) => drawn.displayId !== displayId || drawn.seq > seq);
-    if (this.list.length !== before) this.write();
+    if (this.list.length === before) return false;
+    this.write();
+    return this.list.length > 0;
   }
 
   /** What waits, in messages of one display each, oldest first. */

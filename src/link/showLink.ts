@@ -10,17 +10,20 @@ import {
   emptyClock,
   hubTime,
   roundTrip,
+  sampleOf,
 } from '#shared/time/clockFilter';
 import { CommandsInFlight } from './commandsInFlight';
 import { DrawnQueue } from './drawnQueue';
-import { type LinkParts, openSocket, pageParts, probeHub } from './parts';
-import { passGate } from './reconnect';
+import { type LinkParts, openSocket, pageParts, probeHub, whyNot } from './parts';
+import { passGate, pauseAfter } from './reconnect';
 import { joiningSnapshot, takeMessage } from './takeMessage';
 import type { CommandResult, LinkOptions, LinkSnapshot, ShowLink } from './types';
 
 /** Questions for the time right after joining, so that the clock is good at once: ms after the welcome. */
 const quickTimes = [0, 120, 240, 400, 600, 800];
 const drawnAgainMs = 2000;
+/** More than the exchange can explain by this: one of the two clocks was set or has slept, ms. */
+const clockBroke = 1000;
 
 const refusedWords = {
   [closeCodes.notAllowed]: 'The hub has ended this link: sign-in or role has changed.',
@@ -43,6 +46,15 @@ class Link implements ShowLink {
   private readonly drawn: DrawnQueue;
   private socket: WebSocket | null = null;
   private clock: Clock = emptyClock;
+  /** Hub time minus page time as the welcome had it, good until the first exchange, ms. */
+  private roughOffset = performance.timeOrigin;
+  /** True from a hello until its answer. */
+  private asking = false;
+  /** Sockets in a row that closed before they were welcomed. */
+  private failures = 0;
+  private tickedAt = 0;
+  private readonly waiting = new Set<() => void>();
+  private readonly stopWake: () => void;
   private heardAt = 0;
   private drawnSentAt = Number.NEGATIVE_INFINITY;
   private stopped = false;
@@ -56,6 +68,7 @@ class Link implements ShowLink {
     const { showId, room, as } = options;
     this.drawn = new DrawnQueue(`lampyrid.drawn/${showId}/${room}`, as === 'display' ? parts.store : null);
     this.ticker = setInterval(() => this.tick(), linkTimes.heartbeat);
+    this.stopWake = parts.onWake(() => this.wake());
     void this.join();
   }
 
@@ -84,22 +97,30 @@ class Link implements ShowLink {
 
   hubTimeOf(performanceMs: number): number {
     const at = hubTime(this.clock, performanceMs);
-    // Before the first answer the machine's own clock is the best guess; it is near Unix time as well.
-    return Number.isNaN(at) ? performance.timeOrigin + performanceMs : at;
+    return Number.isNaN(at) ? this.roughOffset + performanceMs : at;
   }
 
   private async join(): Promise<void> {
     const { showId, room, as } = this.options;
     const path = `/hub?show=${encodeURIComponent(showId)}&room=${room}&as=${as}`;
-    const socket = await passGate({
+    // A hub that takes sockets only to close them is not asked at full speed.
+    if (this.failures > 0) await this.wait(pauseAfter(this.failures));
+    const passed = await passGate({
       probe: (limitMs) => probeHub(this.parts, limitMs),
       open: (limitMs) => openSocket(this.parts, path, limitMs),
-      wait: (ms) => new Promise((resolve) => setTimeout(resolve, ms)),
+      whyNot: () => whyNot(this.parts, this.options),
+      wait: (ms) => this.wait(ms),
       stopped: () => this.stopped,
     });
-    if (!socket) return;
+    if (!passed) return;
+    if ('refused' in passed) return this.shutOut(passed.refused);
+    this.seat(passed);
+  }
+
+  private seat(socket: WebSocket): void {
     if (this.stopped) return socket.close();
     this.socket = socket;
+    this.failures += 1;
     this.heardAt = this.parts.now();
     socket.onmessage = (event) => this.hear(String(event.data));
     socket.onclose = (event) => this.lost(socket, event.code);
@@ -108,7 +129,27 @@ class Link implements ShowLink {
     this.hello();
   }
 
+  /** A pause that ends early when the page or its network wakes. */
+  private wait(ms: number): Promise<void> {
+    return new Promise((resolve) => {
+      const done = (): void => {
+        clearTimeout(timer);
+        this.waiting.delete(done);
+        resolve();
+      };
+      const timer = setTimeout(done, ms);
+      this.waiting.add(done);
+    });
+  }
+
+  private wake(): void {
+    for (const done of this.waiting) done();
+    this.tick();
+  }
+
   private hello(): void {
+    if (this.asking) return;
+    this.asking = true;
     const { epoch = null, revision = null } = this.snapshot.state ?? {};
     this.put({ type: 'hello', protocol: protocolVersion, epoch, revision });
   }
@@ -122,15 +163,20 @@ class Link implements ShowLink {
   private lost(socket: WebSocket, code: number): void {
     if (this.socket !== socket) return;
     this.socket = null;
+    this.asking = false;
     this.clearQuick();
     const words = refusedWords[code];
-    if (code === closeCodes.versionMismatch) this.set({ status: 'outdated', awaySince: this.parts.now() });
-    else if (words) this.set({ status: 'refused', refusedWhy: words, awaySince: this.parts.now() });
-    else {
-      this.away();
-      void this.join();
-      return;
+    if (words) return this.shutOut(words);
+    if (code === closeCodes.versionMismatch) {
+      this.set({ status: 'outdated', awaySince: this.parts.now() });
+      return this.commands.giveUp();
     }
+    this.away();
+    void this.join();
+  }
+
+  private shutOut(words: string): void {
+    this.set({ status: 'refused', refusedWhy: words, awaySince: this.parts.now() });
     this.commands.giveUp();
   }
 
@@ -159,7 +205,8 @@ class Link implements ShowLink {
       case 'refused':
         return this.commands.take(message);
       case 'logged':
-        return this.drawn.logged(message.displayId, message.seq);
+        if (this.drawn.logged(message.displayId, message.seq)) this.sendDrawnNow();
+        return;
       case 'draft':
         for (const listener of this.drafts) listener(message.displayId, message.map);
         return;
@@ -167,13 +214,16 @@ class Link implements ShowLink {
         for (const listener of this.reloads) listener(message.displayId);
         return;
     }
+    if (message.type === 'welcome' || message.type === 'resume') this.asking = false;
     const { snapshot, hole } = takeMessage(this.snapshot, message);
     this.become(snapshot);
     if (hole) this.hello();
-    if (message.type === 'welcome' || message.type === 'resume') this.arrived();
+    if (message.type === 'welcome' || message.type === 'resume') this.arrived(message.hubNow);
   }
 
-  private arrived(): void {
+  private arrived(hubNow: number): void {
+    this.failures = 0;
+    this.roughOffset = hubNow - this.parts.now();
     this.clearQuick();
     for (const ms of quickTimes) {
       const timer = setTimeout(() => {
@@ -182,8 +232,7 @@ class Link implements ShowLink {
       }, ms);
       this.quick.add(timer);
     }
-    this.drawnSentAt = Number.NEGATIVE_INFINITY;
-    this.sendDrawn();
+    this.sendDrawnNow();
   }
 
   private clearQuick(): void {
@@ -196,13 +245,22 @@ class Link implements ShowLink {
   }
 
   private takeTime({ t1, t2, t3 }: Extract<FromHub, { type: 'time' }>): void {
-    this.clock = addExchange(this.clock, { t1, t2, t3, t4: this.parts.now() });
+    const exchange = { t1, t2, t3, t4: this.parts.now() };
+    const { offset, delay } = sampleOf(exchange);
+    const error = Math.abs(exchange.t4 + offset - hubTime(this.clock, exchange.t4));
+    // Many machines stop their monotonic clock while they sleep: minutes are then missing that no slewing brings back.
+    const broke = error > clockBroke + Math.max(0, delay);
+    this.clock = addExchange(broke ? emptyClock : this.clock, exchange);
     this.set({ linkMs: roundTrip(this.clock), clockErrorMs: clockError(this.clock) });
   }
 
   private tick(): void {
+    const now = this.parts.now();
+    const held = now - this.tickedAt > 2 * linkTimes.heartbeat;
+    this.tickedAt = now;
     if (!this.socket) return;
-    if (this.parts.now() - this.heardAt > linkTimes.silence) {
+    // A page that was held up itself has words waiting to be read: silence counts only once the hub must have cut it.
+    if (now - this.heardAt > (held ? linkTimes.idle : linkTimes.silence)) {
       // Half-open: the other side is gone and nobody has told us.
       const silent = this.socket;
       silent.onmessage = null;
@@ -219,15 +277,8 @@ class Link implements ShowLink {
   ): Promise<CommandResult> {
     if (this.snapshot.status !== 'on') return { outcome: 'not-sent', words: notSentWords.noLink };
     const command = { id: newId(), expiresAt: this.hubNow() + expiryMs, body };
-    const answer = this.commands.wait(command.id, expiryMs);
-    if (!this.put({ type: 'command', command }))
-      this.commands.take({
-        type: 'refused',
-        commandId: command.id,
-        code: 'expired',
-        words: notSentWords.noLink,
-      });
-    return answer;
+    if (!this.put({ type: 'command', command })) return { outcome: 'not-sent', words: notSentWords.noLink };
+    return this.commands.wait(command.id, expiryMs);
   }
 
   reportVitals(vitals: Vitals): void {
@@ -240,6 +291,10 @@ class Link implements ShowLink {
 
   reportDrawn(drawn: Omit<Drawn, 'seq'>): void {
     this.drawn.add(drawn);
+    this.sendDrawnNow();
+  }
+
+  private sendDrawnNow(): void {
     this.drawnSentAt = Number.NEGATIVE_INFINITY;
     this.sendDrawn();
   }
@@ -265,6 +320,8 @@ class Link implements ShowLink {
   close(): void {
     this.stopped = true;
     clearInterval(this.ticker);
+    this.stopWake();
+    for (const done of this.waiting) done();
     this.clearQuick();
     this.commands.giveUp();
     const socket = this.socket;

@@ -54,7 +54,7 @@ export type CommandResult =
 export interface ShowLink {
   getSnapshot(): LinkSnapshot;
   subscribe(listener: () => void): () => void;
-  /** Hub time now in ms, from the filtered clock; never runs backwards. */
+  /** Hub time now in ms, from the filtered clock; runs backwards only when the hub's own clock was set back by a second or more. */
   hubNow(): number;
   /** Hub time of a `performance.now()` value, such as a frame's. */
   hubTimeOf(performanceMs: number): number;

@@ -25,7 +25,16 @@ const memory = (): KeepStore => {
 
 /** A link as in a page, through a wire that the test can cut. `up` answers the HTTP question. */
 function open(who?: Caller, store: KeepStore | null = null) {
-  const wire = { up: true, sockets: [] as Socket[] };
+  const wire = {
+    up: true,
+    sockets: [] as Socket[],
+    /** What the server answers to a question about this page. */
+    known: 200,
+    /** How far the page's monotonic clock has fallen behind, ms. */
+    slept: 0,
+    probes: 0,
+    wake: () => {},
+  };
   const headers = { origin: 'http://here', cookie: who ? `user=${who.userId}` : 'device=1' };
   class Wired extends Socket {
     constructor(url: string) {
@@ -38,13 +47,19 @@ function open(who?: Caller, store: KeepStore | null = null) {
     { showId: house.showId, room: 'live', as: who ? 'crew' : 'display' },
     {
       WebSocket: Wired as unknown as typeof WebSocket,
-      fetch: (async () => {
+      fetch: (async (path: string) => {
         if (!wire.up) throw new TypeError('refused');
+        if (!String(path).endsWith('/healthz')) return new Response('{}', { status: wire.known });
+        wire.probes += 1;
         return new Response('{}');
       }) as typeof fetch,
-      now: () => performance.now(),
+      now: () => performance.now() - wire.slept,
       origin: `http://${house.address}`,
       store,
+      onWake: (wake) => {
+        wire.wake = wake;
+        return () => {};
+      },
     },
   );
   links.push(link);
@@ -177,6 +192,62 @@ describe('a link', () => {
     expect(refusedWhy).toContain('sign-in or role');
   });
 
+  it('that the hub lets in no more learns why', async () => {
+    const stranger = { ...(await house.member('vj')), userId: 'nobody-here' };
+    const { link, wire } = open(stranger);
+    wire.known = 401;
+    const { refusedWhy } = await until(link, ({ status }) => status === 'refused');
+    expect(refusedWhy).toBe('You are signed out: sign in again to go on.');
+    const { probes } = wire;
+    wire.wake();
+    expect(wire.probes).toBe(probes);
+  });
+
+  it('tries no faster than the hub refuses while nothing speaks against the page', async () => {
+    const stranger = { ...(await house.member('vj')), userId: 'nobody-here' };
+    const { link, wire } = open(stranger);
+    await expect.poll(() => wire.probes, { timeout: 6000 }).toBe(3);
+    const third = performance.now();
+    await expect.poll(() => wire.probes, { timeout: 6000, interval: 10 }).toBe(4);
+    // After three failures: 4 × 200 ms at the least.
+    expect(performance.now() - third).toBeGreaterThan(700);
+    expect(link.getSnapshot().status).toBe('joining');
+  });
+
+  it('joins at once when the network comes back, whatever pause it is in', async () => {
+    const stranger = { ...(await house.member('vj')), userId: 'nobody-here' };
+    const { wire } = open(stranger);
+    await expect.poll(() => wire.probes, { timeout: 9000, interval: 10 }).toBe(4);
+    await expect.poll(() => wire.sockets.length).toBe(4);
+    const { socket } = await new Promise<{ socket: Socket }>((resolve) => {
+      const last = wire.sockets[3];
+      if (!last) throw new Error('no socket');
+      if (last.readyState === Socket.CLOSED) resolve({ socket: last });
+      else last.on('close', () => resolve({ socket: last }));
+    });
+    expect(socket.readyState).toBe(Socket.CLOSED);
+    await expect
+      .poll(
+        () => {
+          wire.wake();
+          return wire.probes;
+        },
+        { timeout: 500, interval: 10 },
+      )
+      .toBe(5);
+  });
+
+  it('has the hub’s time again after a sleep in which the machine’s clock stood', async () => {
+    const { link, wire } = open(house.lead);
+    await until(link, ({ clockErrorMs }) => clockErrorMs !== null);
+    wire.slept = 600_000;
+    const off = () => Math.abs(link.hubNow() - (performance.timeOrigin + performance.now()));
+    expect(off()).toBeGreaterThan(590_000);
+    await expect.poll(off, { timeout: 3000 }).toBeLessThan(25);
+    const answer = await link.send({ kind: 'dimmer.set', level: 0.5 });
+    expect(answer.outcome).toBe('taken');
+  });
+
   it('finds out that a hub has gone silent', async () => {
     // Takes sockets and says nothing: a machine that froze.
     const { WebSocketServer } = await import('ws');
@@ -197,6 +268,7 @@ describe('a link', () => {
         now: () => performance.now(),
         origin: `http://127.0.0.1:${port}`,
         store: null,
+        onWake: () => () => {},
       },
     );
     links.push(link);
