@@ -12,6 +12,9 @@ export default defineConfig({
   outputDir: 'test-results',
   use: {
     trace: 'off',
+    // Whatever hangs says where.
+    actionTimeout: 45_000,
+    navigationTimeout: 45_000,
     viewport: { width: 1280, height: 800 },
     launchOptions: {
       executablePath: process.env.CHROMIUM || '/usr/bin/chromium',
