@@ -15,8 +15,8 @@ export interface House {
   databaseUrl: string;
   /** All that the server has printed. */
   printed: () => string;
-  /** Kills the server (kill -9 unless told otherwise) and starts it again at the same address. */
-  restart: (signal?: 'SIGKILL' | 'SIGTERM') => Promise<void>;
+  /** Kills the server (kill -9 unless told otherwise), lets something happen, and starts it again at the same address. */
+  restart: (signal?: 'SIGKILL' | 'SIGTERM', meanwhile?: () => Promise<void>) => Promise<void>;
   stop: () => Promise<void>;
 }
 
@@ -45,8 +45,9 @@ export async function startHouse(env: Record<string, string> = {}): Promise<Hous
     setUpUrl: running.ready.setUpUrl ?? '',
     databaseUrl,
     printed: () => parts.join(''),
-    restart: async (signal = 'SIGKILL') => {
+    restart: async (signal = 'SIGKILL', meanwhile) => {
       await end(running.child, signal);
+      await meanwhile?.();
       running = await launch(all, parts);
     },
     stop: async () => {

@@ -1,12 +1,16 @@
-/** A question to our own server. `status` 0: no answer. Never throws: a display has nobody to tell. */
+/**
+ * A question to our own server. `status` 0: no answer within `limitMs`. Never throws: a display has nobody to tell.
+ */
 export async function call(
   method: 'GET' | 'POST',
   path: string,
   body?: unknown,
+  limitMs = 6000,
 ): Promise<{ status: number; body: unknown }> {
   try {
     const answer = await fetch(path, {
       method,
+      signal: AbortSignal.timeout(limitMs),
       credentials: 'same-origin',
       headers: body === undefined ? {} : { 'content-type': 'application/json' },
       body: body === undefined ? undefined : JSON.stringify(body),

@@ -1,9 +1,11 @@
 import type { OutputMap } from '#shared/mapping/schema';
+import type { ScreenFrame } from '#shared/scene/drawingList';
 import { evaluateScreen, sceneBodies } from '#shared/scene/evaluate';
 import type { ShowLink } from '@/link/types';
 import { createFileStore } from '@/stage/fileStore';
 import { pictureData } from '@/stage/pictureData';
 import { createStage } from '@/stage/stage';
+import { CanvasHealth, Stillness } from './health';
 import { type Known, recall } from './lastPicture';
 import { ChangeCounter, drawnReporter } from './reports';
 
@@ -14,6 +16,10 @@ const small = { side: 160, everyMs: 1000 } as const;
 export class DisplayPicture {
   readonly files = createFileStore();
   readonly changes = new ChangeCounter();
+  readonly stillness = new Stillness();
+  /** True while the graphics card seems to be lost for good. */
+  dark = false;
+  private readonly health = new CanvasHealth();
   size: [number, number] = [16, 16];
   private readonly stage;
   private readonly reportDrawn;
@@ -94,15 +100,19 @@ export class DisplayPicture {
     this.reportDrawn(frames, state, t);
     if (!this.reading && performanceMs - this.readAt > small.everyMs) {
       this.readAt = performanceMs;
-      void this.readSmall(t);
+      void this.readSmall(t, frames, state.lineUp.includes(this.displayId));
     }
+    this.dark = this.health.frame(performanceMs, frames.length > 0);
   }
 
-  private async readSmall(at: number): Promise<void> {
+  private async readSmall(at: number, frames: readonly ScreenFrame[], lineUp: boolean): Promise<void> {
     this.reading = true;
     try {
-      for (const one of await this.stage.readPictures(small.side)) {
-        this.changes.see(one);
+      const pictures = await this.stage.readPictures(small.side);
+      if (pictures.length > 0) this.health.good(performance.now());
+      for (const one of pictures) this.changes.see(one);
+      this.stillness.see(lineUp ? [] : frames);
+      for (const one of pictures) {
         const data = await pictureData(one);
         if (data) this.link.reportPicture({ displayId: this.displayId, screenId: one.screenId, at, data });
       }

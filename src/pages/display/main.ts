@@ -1,20 +1,30 @@
 import { z } from 'zod';
 import { call, wait } from './call';
 import { forget, recallDisplay } from './lastPicture';
-import { pair } from './pairing';
+import { hide, pair, showAway } from './pairing';
 import { type Self, showDisplay } from './showDisplay';
 
 const selfSchema = z.object({ displayId: z.string(), showId: z.string() });
 
+/** A display that has a picture of its own goes on with it when the server takes longer than this to answer, ms. */
+const picturedMs = 700;
+
 /** Who this browser is: a joined display, nobody yet, or what it was before when the server does not answer. */
-async function whoAmI(): Promise<Self | 'nobody'> {
+async function whoAmI(place: HTMLElement): Promise<Self | 'nobody'> {
   for (;;) {
-    const { status, body } = await call('GET', '/api/display/self');
+    const before = recallDisplay();
+    const { status, body } = await call(
+      'GET',
+      '/api/display/self',
+      undefined,
+      before ? picturedMs : undefined,
+    );
     const self = selfSchema.safeParse(body);
     if (status === 200 && self.success) return self.data;
     if (status === 401) return 'nobody';
-    const before = recallDisplay();
+    // Wrong, should it have been taken out meanwhile: the link then learns it and the code comes up.
     if (before) return before;
+    showAway(place);
     await wait(1500);
   }
 }
@@ -30,7 +40,8 @@ function freshCanvas(): HTMLCanvasElement {
 
 async function live(place: HTMLElement): Promise<void> {
   for (;;) {
-    const who = await whoAmI();
+    const who = await whoAmI(place);
+    hide(place);
     document.documentElement.dataset.state = who === 'nobody' ? 'pairing' : 'joined';
     if (who === 'nobody') {
       forget();
@@ -48,9 +59,13 @@ function goFullscreen(): void {
 
 window.addEventListener('pointerdown', goFullscreen);
 window.addEventListener('keydown', ({ key }) => {
-  if (key === 'f' || key === 'Enter') goFullscreen();
+  if (key.toLowerCase() === 'f' || key === 'Enter') goFullscreen();
 });
 window.addEventListener('contextmenu', (event) => event.preventDefault());
+window.addEventListener('pageshow', ({ persisted }) => {
+  // A page that comes back from the browser's memory has lost its socket and its card's textures.
+  if (persisted) window.location.reload();
+});
 
 const place = document.getElementById('code');
 if (place) void live(place);

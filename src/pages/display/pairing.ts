@@ -32,7 +32,13 @@ function show(place: HTMLElement, code: string): void {
   place.hidden = false;
 }
 
-function hide(place: HTMLElement): void {
+/** A dim mark, so that who sets up sees that the page runs and waits for the server. Never over a picture. */
+export function showAway(place: HTMLElement): void {
+  place.replaceChildren(line('away', '·'));
+  place.hidden = false;
+}
+
+export function hide(place: HTMLElement): void {
   place.hidden = true;
   place.replaceChildren();
 }
@@ -63,7 +69,7 @@ export async function pair(place: HTMLElement): Promise<void> {
     const { status, body } = await call('POST', '/api/pairing', { raster: rasterNow() });
     const asked = askedSchema.safeParse(body);
     if (status !== 201 || !asked.success) {
-      hide(place);
+      showAway(place);
       await wait(awayMs);
       continue;
     }

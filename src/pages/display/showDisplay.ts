@@ -2,7 +2,9 @@ import { keepAwake } from '@/inputs/wakeLock';
 import { createShowLink } from '@/link/showLink';
 import { call } from './call';
 import { DisplayPicture } from './displayPicture';
-import { remember } from './lastPicture';
+import { recover } from './health';
+import { keepPage } from './keepPage';
+import { type Known, remember } from './lastPicture';
 import { FrameMeter } from './reports';
 
 export interface Self {
@@ -11,7 +13,7 @@ export interface Self {
 }
 
 /** Each ms. While the link is away, the server is asked whether we are still joined. */
-const periods = { remember: 1000, vitals: 1000, self: 4000 } as const;
+const periods = { remember: 1000, vitals: 1000, self: 4000, recover: 5000 } as const;
 
 /**
  * Draws a show's picture on a canvas until this display is taken out of the show. Goes on by itself while the hub is
@@ -31,13 +33,14 @@ export async function showDisplay(canvas: HTMLCanvasElement, { displayId, showId
   const picture = new DisplayPicture(canvas, link, displayId, note);
 
   const reportVitals = (): void => {
-    const { status, linkMs, clockErrorMs, state } = link.getSnapshot();
+    const { status, linkMs, clockErrorMs } = link.getSnapshot();
     const { onBoard, wanted } = picture.files.counts();
     const rates = meter.read();
     Object.assign(document.documentElement.dataset, {
       link: status,
       fps: rates.fps,
       files: `${onBoard}/${wanted}`,
+      still: picture.stillness.still,
     });
     link.reportVitals({
       displayId,
@@ -50,10 +53,10 @@ export async function showDisplay(canvas: HTMLCanvasElement, { displayId, showId
       visible: !document.hidden,
       fullscreen: document.fullscreenElement !== null || window.innerHeight >= window.screen.height,
       awake,
-      still: state ? state.freeze.on || state.blackout.on : false,
+      still: picture.stillness.still,
       changes: picture.changes.count,
       upS: Math.round((performance.now() - started) / 1000),
-      trouble,
+      trouble: picture.dark ? 'nothing is drawn, the graphics card is lost' : trouble,
     });
     trouble = null;
   };
@@ -64,8 +67,7 @@ export async function showDisplay(canvas: HTMLCanvasElement, { displayId, showId
     picture.draw(performanceMs);
     meter.frame(performanceMs);
   }, note);
-  const onError = (event: ErrorEvent): void => note(event.error ?? event.message);
-  window.addEventListener('error', onError);
+  const stopFaults = onFault(note);
   link.onDraft((id, map) => {
     if (id === displayId) picture.setDraft(map);
   });
@@ -74,19 +76,53 @@ export async function showDisplay(canvas: HTMLCanvasElement, { displayId, showId
   });
   const timers = [
     setInterval(reportVitals, periods.vitals),
+    setInterval(rememberer(displayId, picture), periods.remember),
     setInterval(() => {
-      const known = picture.fromHub();
-      if (known) remember(displayId, known);
-    }, periods.remember),
+      if (picture.dark) void recover();
+    }, periods.recover),
   ];
 
   await untilOut(link);
   stopLoop();
   stopAwake();
   for (const timer of timers) clearInterval(timer);
-  window.removeEventListener('error', onError);
+  stopFaults();
   link.close();
   picture.dispose();
+}
+
+/** Hears of everything that nobody caught. Returns what stops it. */
+function onFault(note: (error: unknown) => void): () => void {
+  const onError = (event: ErrorEvent): void => note(event.error ?? event.message);
+  const onRejection = (event: PromiseRejectionEvent): void => note(event.reason);
+  window.addEventListener('error', onError);
+  window.addEventListener('unhandledrejection', onRejection);
+  return () => {
+    window.removeEventListener('error', onError);
+    window.removeEventListener('unhandledrejection', onRejection);
+  };
+}
+
+/** After the first word from the hub; the first picture comes first, ms. */
+const keepPageAfter = 3000;
+
+/** Keeps what the hub has told, when it is news: writing a whole show each second would cost frames. */
+function rememberer(displayId: string, picture: DisplayPicture): () => void {
+  let kept: Known | null = null;
+  return () => {
+    const known = picture.fromHub();
+    if (!known) return;
+    const same =
+      kept !== null &&
+      known.state === kept.state &&
+      known.manifest === kept.manifest &&
+      known.map === kept.map &&
+      known.name === kept.name;
+    if (same) return;
+    if (!kept) setTimeout(() => void keepPage(), keepPageAfter);
+    kept = known;
+    remember(displayId, known);
+  };
 }
 
 /** Calls a work at each frame; a frame that fails is not the last. Returns what stops it. */
