@@ -21,12 +21,15 @@ export interface AppParts {
   hosts: HostRule;
   /** Built pages; null serves none (tests of routes). */
   pagesFolder: string | null;
+  /** A proxy on this machine stands before us: then, and only then, what it says of client and https is believed. */
+  behindProxy?: boolean;
 }
 
 /** The server's HTTP side: guards, then who asks, then routes, then pages, then problems. */
 export function makeApp(parts: AppParts): Express {
   const app = express();
   app.disable('x-powered-by');
+  app.set('trust proxy', parts.behindProxy ? 'loopback' : false);
   app.use(securityHeaders(parts.hosts));
   app.use(hostGuard(parts.hosts));
   app.get('/healthz', (_request, response) => {

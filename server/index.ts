@@ -108,6 +108,7 @@ async function makeParts(config: Config, log: Log, db: Database, hosts: HostRule
     sessions: sessionMiddleware(db, secret),
     routers: routersOf(context),
     pagesFolder: config.pagesFolder,
+    behindProxy: config.publicUrl !== null,
   });
   return { app, hub, context, closeMedia: media.close };
 }

@@ -11,7 +11,7 @@ import { changeRole, readCrew, removeMember } from '#server/services/accounts/me
 import { finishSetUp, setUpOpen } from '#server/services/accounts/setUp';
 import { changePassword, signIn } from '#server/services/accounts/signIn';
 import { audit } from '#server/services/audit';
-import { notFound } from '#server/services/fault';
+import { Fault, notFound } from '#server/services/fault';
 import { endOtherSessions, endSession, listSessions, sessionCaller } from '#server/services/sessions';
 import {
   acceptSchema,
@@ -35,6 +35,8 @@ const quarter = 15 * 60_000;
 /** Accounts: set-up, signing in and out, passwords, invitations, people. */
 export const accountRoutes = (context: RouteContext): Router => {
   const router = Router();
+  // By address and mail, so that a stranger's guesses lock no one out; and by address, against one guess at each mail.
+  router.post('/api/session', guesses({ windowMs: quarter, most: 60, failures: true }));
   router.post('/api/session', guesses({ windowMs: quarter, most: 10, by: 'email', failures: true }));
   router.post('/api/password/forgot', guesses({ windowMs: 4 * quarter, most: 5, by: 'email' }));
   router.post(
@@ -127,14 +129,15 @@ function passwordRoutes(router: Router, context: RouteContext): void {
   route(
     router,
     { method: 'post', path: '/api/password/forgot', action: 'password.forgot', body: forgotSchema },
-    async ({ body, request }) => {
-      const made = await forgetPassword(db, body.email);
-      if (!made) return;
-      const url = `${originOf(context, request.headers.origin)}/reset#${made.token}`;
+    ({ body, request }) => {
+      const send = async () => {
+        const made = await forgetPassword(db, body.email);
+        if (!made) return;
+        const url = `${originOf(context, request.headers.origin)}/reset#${made.token}`;
+        await mail.send(passwordLetter(body.email, { name: made.name, url }));
+      };
       // Not waited for: the time it takes would tell whether the address is known.
-      void mail
-        .send(passwordLetter(body.email, { name: made.name, url }))
-        .catch((error: unknown) => log.warn({ err: error }, 'a password letter did not leave'));
+      void send().catch((error: unknown) => log.warn({ err: error }, 'a password letter did not leave'));
     },
   );
   route(
@@ -152,7 +155,8 @@ function passwordRoutes(router: Router, context: RouteContext): void {
     { method: 'post', path: '/api/password/change', action: 'password.change', body: changePasswordSchema },
     async ({ body, caller }) => {
       await changePassword(db, caller.userId, body.old, body.password);
-      await endOtherSessions(db, caller.userId, caller.sessionId);
+      const ended = await endOtherSessions(db, caller.userId, caller.sessionId);
+      for (const sessionId of ended) hub.revoke({ sessionId });
       await audit(db, { caller, action: 'password.change' });
     },
   );
@@ -163,14 +167,25 @@ const originOf = ({ config }: RouteContext, origin: string | undefined): string 
   config.publicUrl?.replace(/\/$/, '') ?? origin ?? '';
 
 function invitationRoutes(router: Router, context: RouteContext): void {
-  const { db, mail } = context;
+  const { db, mail, log } = context;
   route(
     router,
     { method: 'post', path: '/api/invitations', action: 'invitation.make', body: inviteSchema, status: 201 },
     async ({ body, caller, request }) => {
       const { invitation, token, crewName } = await invite(db, caller, body);
       const url = `${originOf(context, request.headers.origin)}/invite#${token}`;
-      await mail.send(invitationLetter(body.email, { crewName, by: caller.name, role: body.role, url }));
+      const letter = invitationLetter(body.email, { crewName, by: caller.name, role: body.role, url });
+      try {
+        await mail.send(letter);
+      } catch (error) {
+        log.warn({ err: error }, 'an invitation did not leave');
+        await revokeInvitation(db, caller.crewId, invitation.id);
+        throw new Fault(
+          502,
+          `The mail server did not take the letter to ${body.email}, so nobody is invited.`,
+          'Check the address, or ask whoever runs Lampyrid to check SMTP_URL, and invite again.',
+        );
+      }
       await audit(db, { caller, action: 'invitation.make', object: body.email });
       return invitation;
     },

@@ -59,7 +59,7 @@ function pairingRoutes(router: Router, { db, hub }: RouteContext): void {
     ({ body, request }) =>
       askPairing(db, {
         raster: body.raster,
-        address: request.socket.remoteAddress ?? 'unknown',
+        address: request.ip ?? 'unknown',
         browser: request.get('user-agent') ?? '',
       }),
   );

@@ -25,7 +25,7 @@ export const guesses = ({ windowMs, most, by, failures = false }: Limit): Reques
       const field = by
         ? String((request.body as Record<string, unknown> | undefined)?.[by] ?? '').slice(0, 300)
         : '';
-      return `${ipKeyGenerator(request.socket.remoteAddress ?? '')} ${field.trim().toLowerCase()}`;
+      return `${ipKeyGenerator(request.ip ?? '')} ${field.trim().toLowerCase()}`;
     },
     handler: () => {
       throw new Fault(429, 'Too many tries.', `Wait ${minutes(windowMs)} and try again.`);

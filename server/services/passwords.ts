@@ -48,8 +48,15 @@ export async function hashPassword(password: string): Promise<string> {
 /** A hash that no password fits, so that a question about nobody takes as long as one about somebody. */
 const nobody = '$2b$12$3RhMmI1dFfAK2eR32yoleunHXJTkaBJmPYfk1uwveNDXlyswc5BnC';
 
-/** Whether a password fits a hash; `null` (no such user) takes the same time and is never true. */
+/** bcrypt reads no further, so a longer password would fit by its beginning. */
+const mostBytes = 72;
+
+/**
+ * Whether a password fits a hash; `null` (no such user) takes the same time and is never true.
+ * @throws Error when the thread has died
+ */
 export async function checkPassword(password: string, hash: string | null): Promise<boolean> {
   const fits = await ask(password, hash ?? nobody);
-  return hash !== null && fits === true;
+  if (fits === null) throw new Error('The password could not be checked.');
+  return hash !== null && fits === true && Buffer.byteLength(password) <= mostBytes;
 }

@@ -1,5 +1,5 @@
 import { createHmac, randomBytes, timingSafeEqual } from 'node:crypto';
-import { mkdir, readFile, writeFile } from 'node:fs/promises';
+import { link, mkdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import type { Database } from '#server/models/database';
 
@@ -9,14 +9,31 @@ export const sessionCookieName = 'lampyrid.sid';
 export async function sessionSecret(dataFolder: string): Promise<string> {
   const path = join(dataFolder, 'session-secret');
   await mkdir(dataFolder, { recursive: true });
+  const made = randomBytes(32).toString('base64url');
+  const draft = `${path}.${made.slice(0, 8)}`;
   try {
-    const made = randomBytes(32).toString('base64url');
-    // `wx`: of two starts at once only one writes it.
-    await writeFile(path, made, { mode: 0o600, flag: 'wx' });
+    // Written whole, then named: of two starts at once one names it, and the other never reads half a key.
+    await writeFile(draft, made, { mode: 0o600, flag: 'wx' });
+    await link(draft, path).catch((error: NodeJS.ErrnoException) => {
+      if (error.code === 'EEXIST') throw error;
+      // Some drives, such as exFAT, know no links.
+      return writeFile(path, made, { mode: 0o600, flag: 'wx' });
+    });
     return made;
   } catch (error) {
     if ((error as NodeJS.ErrnoException).code !== 'EEXIST') throw error;
     return (await readFile(path, 'utf8')).trim();
+  } finally {
+    await rm(draft, { force: true });
+  }
+}
+
+/** Text without its percent signs; null for what no browser of ours was given. */
+function plain(text: string): string | null {
+  try {
+    return decodeURIComponent(text);
+  } catch {
+    return null;
   }
 }
 
@@ -24,7 +41,7 @@ export async function sessionSecret(dataFolder: string): Promise<string> {
 function cookieValue(header: string | undefined): string | null {
   for (const part of (header ?? '').split(';')) {
     const at = part.indexOf('=');
-    if (part.slice(0, at).trim() === sessionCookieName) return decodeURIComponent(part.slice(at + 1).trim());
+    if (part.slice(0, at).trim() === sessionCookieName) return plain(part.slice(at + 1).trim());
   }
   return null;
 }
@@ -44,14 +61,14 @@ export async function readSessionCookie(
   db: Database,
   secret: string,
   header: string | undefined,
-): Promise<{ userId: string; sessionId: string } | null> {
+): Promise<{ userId: string; sessionId: string; since: string | null } | null> {
   const value = cookieValue(header);
   const sessionId = value ? unsigned(value, secret) : null;
   if (!sessionId) return null;
-  const { rows } = await db.pool.query<{ userId: string | null }>(
-    `select sess->>'userId' as "userId" from session where sid = $1 and expire > now()`,
+  const { rows } = await db.pool.query<{ userId: string | null; since: string | null }>(
+    `select sess->>'userId' as "userId", sess->>'since' as since from session where sid = $1 and expire > now()`,
     [sessionId],
   );
-  const userId = rows[0]?.userId;
-  return userId ? { userId, sessionId } : null;
+  const [row] = rows;
+  return row?.userId ? { userId: row.userId, sessionId, since: row.since } : null;
 }

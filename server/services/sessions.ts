@@ -9,12 +9,24 @@ export interface SessionFacts {
   /** Name of the session in the table. */
   id?: string;
   sessionId?: string;
+  /** ISO time of the sign-in. */
+  since?: string | null;
 }
 
-/** The member behind a session; null when nobody is signed in, or is in no crew any more. */
-export async function sessionCaller(db: Database, session: SessionFacts | undefined): Promise<Caller | null> {
+/** Longest use of one sign-in however busy it is, ms: thirty days, so that a lost phone ends by itself. */
+const longestMs = 30 * 24 * 3_600_000;
+
+const tooOld = (since: string | null | undefined, now: number): boolean =>
+  since !== null && since !== undefined && Date.parse(since) + longestMs <= now;
+
+/** The member behind a session; null when nobody is signed in, has been for too long, or is in no crew any more. */
+export async function sessionCaller(
+  db: Database,
+  session: SessionFacts | undefined,
+  now = Date.now(),
+): Promise<Caller | null> {
   const userId = session?.userId;
-  if (!userId) return null;
+  if (!userId || tooOld(session.since, now)) return null;
   const [user, membership] = await Promise.all([db.users.findByPk(userId), db.memberships.findByPk(userId)]);
   if (!user || !membership) return null;
   return {
@@ -58,12 +70,16 @@ export async function endSession(db: Database, userId: string, id: string): Prom
   return rows[0]?.sid ?? null;
 }
 
-/** Ends all sessions of a user but one. */
-export async function endOtherSessions(db: Database, userId: string, keep: string | null): Promise<void> {
-  await db.pool.query("delete from session where sess->>'userId' = $1 and sid <> $2", [userId, keep ?? '']);
+/** Ends all sessions of a user but one. Returns the full names of those that ended. */
+export async function endOtherSessions(db: Database, userId: string, keep: string | null): Promise<string[]> {
+  const { rows } = await db.pool.query<{ sid: string }>(
+    "delete from session where sess->>'userId' = $1 and sid <> $2 returning sid",
+    [userId, keep ?? ''],
+  );
+  return rows.map(({ sid }) => sid);
 }
 
-/** Removes one-time links and invitations that have ended more than a day ago. */
+/** Removes one-time links that ended more than a day ago. */
 export async function sweepLinks(db: Database, now = Date.now()): Promise<void> {
   const dead = new Date(now - 24 * 3_600_000);
   await db.links.destroy({ where: { expiresAt: { [Op.lt]: dead } } });

@@ -1,6 +1,7 @@
 import type { Database } from '#server/models/database';
 import { Fault } from '../fault';
 import { hashPassword } from '../passwords';
+import { sweepLinks } from '../sessions';
 import { newToken, tokenHash } from '../tokens';
 
 const purpose = 'password';
@@ -14,6 +15,7 @@ export async function forgetPassword(
 ): Promise<{ token: string; name: string } | null> {
   const user = await db.users.findOne({ where: { email } });
   if (!user) return null;
+  await sweepLinks(db, now);
   const token = newToken();
   await db.links.destroy({ where: { purpose, object: user.id } });
   await db.links.create({
@@ -46,6 +48,7 @@ export async function resetPassword(
   const passwordHash = await hashPassword(password);
   // Whoever removes the row has the link: of two at once the second comes too late.
   if ((await db.links.destroy({ where: { tokenHash: link.tokenHash } })) !== 1) throw ended;
-  await db.users.update({ passwordHash }, { where: { id: link.object } });
+  const [changed] = await db.users.update({ passwordHash }, { where: { id: link.object } });
+  if (changed !== 1) throw ended;
   return link.object;
 }

@@ -107,6 +107,8 @@ export async function acceptInvitation(
       { where: { id: row.id, acceptedAt: null }, transaction },
     );
     if (taken !== 1) throw new Fault(410, 'This invitation has just been used.', 'Sign in.');
+    if (await db.users.findOne({ where: { email: row.email }, transaction }))
+      throw new Fault(409, `${row.email} has an account already.`, 'Sign in.');
     const userId = newId();
     await db.users.create(
       { id: userId, name: wanted.name, email: row.email, passwordHash, lastSignInAt: new Date(now) },

@@ -55,6 +55,7 @@ export const changeRole = (db: Database, crewId: string, userId: string, role: R
 export const removeMember = (db: Database, crewId: string, userId: string): Promise<void> =>
   withMember(db, crewId, userId, false, async (transaction) => {
     await db.users.destroy({ where: { id: userId }, transaction });
+    await db.links.destroy({ where: { object: userId }, transaction });
     await db.sequelize.query("delete from session where sess->>'userId' = :userId", {
       replacements: { userId },
       transaction,
