@@ -86,6 +86,7 @@ export async function makeTestApp(
     routers: make.map((one) => one(context)),
     hosts: { knows: (name) => name === host, socketOrigins: () => [] },
     pagesFolder: null,
+    behindProxy: context.config.publicUrl !== null,
   });
   return {
     app,

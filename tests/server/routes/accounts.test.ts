@@ -184,6 +184,77 @@ describe('a forgotten password', () => {
   });
 });
 
+describe('a changed password', () => {
+  it('ends the other sign-ins and their sockets, not this one', async () => {
+    const here = await join('changing@crew.example', 'vj');
+    const there = house.browser();
+    const old = 'a lantern on the quay';
+    await there.post('/api/session', { email: 'changing@crew.example', password: old }).expect(200);
+    const wrong = await here.post('/api/password/change', { old: 'not this one', password: words });
+    expect(wrong.status).toBe(422);
+    expect(wrong.body.fields[0].path).toBe('old');
+    house.told.length = 0;
+    await here.post('/api/password/change', { old, password: words }).expect(204);
+    expect(house.told).toEqual([['revoke', { sessionId: expect.any(String) }]]);
+    expect((await there.get('/api/session')).body.user).toBeNull();
+    await here.get('/api/crew').expect(200);
+  });
+});
+
+describe('letters that do not leave', () => {
+  it('leave no invitation behind, and say why', async () => {
+    const send = house.context.mail.send;
+    house.context.mail.send = () => Promise.reject(new Error('connection refused'));
+    const answer = await lead.post('/api/invitations', { email: 'lost@crew.example', role: 'vj' });
+    house.context.mail.send = send;
+    expect(answer.status).toBe(502);
+    expect(answer.body.detail).toContain('lost@crew.example');
+    const { body } = await lead.get('/api/crew').expect(200);
+    expect(JSON.stringify(body.invitations)).not.toContain('lost@crew.example');
+  });
+});
+
+describe('kept letters', () => {
+  it('are not for whoever comes through a proxy', async () => {
+    await house.browser().get('/api/mail').set('x-forwarded-for', '203.0.113.9').expect(403);
+    await lead.get('/api/mail').set('x-forwarded-for', '203.0.113.9').expect(200);
+  });
+
+  it('are the lead’s alone at a public address', async () => {
+    const config = { ...house.context.config, publicUrl: 'https://show.example' };
+    const published = await makeTestApp([mailRoutes], { config });
+    await published.browser().get('/api/mail').expect(403);
+    await published.close();
+  });
+});
+
+describe('what a proxy says', () => {
+  const knock = (browser: Browser, from: string) =>
+    browser.post('/api/invitations/read', { token: 'a'.repeat(43) }).set('x-forwarded-for', from);
+
+  it('counts for nothing when none was announced: guesses stay one stranger’s', async () => {
+    const bare = await makeTestApp([accountRoutes]);
+    for (let one = 0; one < 30; one += 1) await knock(bare.browser(), `203.0.113.${one}`).expect(410);
+    await knock(bare.browser(), '203.0.113.99').expect(429);
+    await bare.close();
+  });
+
+  it('tells strangers apart and makes the cookie secure at a public address', async () => {
+    const config = { ...house.context.config, publicUrl: 'https://show.example' };
+    const published = await makeTestApp([accountRoutes], { config });
+    for (let one = 0; one < 30; one += 1) await knock(published.browser(), '203.0.113.9').expect(410);
+    await knock(published.browser(), '203.0.113.9').expect(429);
+    const token = await setUpLink(published.db);
+    const answer = await published
+      .browser()
+      .post('/api/setup', { token, ...ines, demo: false })
+      .set({ 'x-forwarded-for': '203.0.113.10', 'x-forwarded-proto': 'https' })
+      .expect(201);
+    expect(String(answer.headers['set-cookie'])).toContain('Secure');
+    await published.close();
+  });
+});
+
 describe('the people of a crew', () => {
   it('keep at least one lead', async () => {
     const { body } = await lead.get('/api/crew').expect(200);
