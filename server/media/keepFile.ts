@@ -11,6 +11,12 @@ export async function hashFile(path: string): Promise<string> {
   return hash.digest('hex');
 }
 
+/** Waits until a file, or the names in a folder, are on the disk. */
+async function sync(path: string): Promise<void> {
+  const file = await open(path, 'r');
+  await file.sync().finally(() => file.close());
+}
+
 /**
  * Moves a finished file to where it is served from, named after its content: the same content twice is one file. On
  * disk before it has its name, so that a power cut never leaves half a file under a whole name.
@@ -19,10 +25,9 @@ export async function hashFile(path: string): Promise<string> {
  */
 export async function keepFile(path: string, folder: string, ext: string): Promise<string> {
   const name = `${await hashFile(path)}.${ext}`;
-  const file = await open(path, 'r');
-  await file.sync();
-  await file.close();
+  await sync(path);
   await rename(path, join(folder, name));
+  await sync(folder);
   return name;
 }
 

@@ -3,10 +3,13 @@ export class MediaFault extends Error {
   override readonly name = 'MediaFault';
 }
 
+/** Whether ffmpeg met the end of a file before the end of its picture. */
+export const endsEarly = (complaint: string): boolean => /partial file|ended prematurely/i.test(complaint);
+
 /** What the complaints of ffmpeg mean, first match first. */
 const meanings: [RegExp, string][] = [
   [
-    /moov atom not found|End of file|truncated|partial file/i,
+    /moov atom not found|End of file|truncated|partial file|ended prematurely/i,
     'This file ends in the middle: upload it again.',
   ],
   [

@@ -3,7 +3,7 @@ import { uploadLimits } from '#shared/api/assets';
 import { faultOf, MediaFault } from './mediaFault';
 import { run } from './run';
 
-/** Facts of a video as it is seen: turned upright. */
+/** Facts of a video as it is seen: turned upright, in square pixels. */
 export interface VideoFacts {
   width: number;
   height: number;
@@ -41,6 +41,7 @@ const answerSchema = z.object({
       duration: z.coerce.number().optional(),
       avg_frame_rate: z.string().default('0/0'),
       r_frame_rate: z.string().default('0/0'),
+      sample_aspect_ratio: z.string().default('1:1'),
       color_transfer: z.string().optional(),
       side_data_list: z.array(z.object({ rotation: z.coerce.number().optional() })).default([]),
       tags: z.object({ rotate: z.coerce.number().optional() }).default({}),
@@ -49,7 +50,7 @@ const answerSchema = z.object({
 });
 
 const rate = (text: string): number => {
-  const [over = 0, under = 0] = text.split('/').map(Number);
+  const [over = 0, under = 0] = text.split(/[/:]/).map(Number);
   return under > 0 ? over / under : 0;
 };
 
@@ -68,9 +69,10 @@ export const factsOf = (json: string): VideoFacts => {
   const turn =
     stream.side_data_list.find((side) => side.rotation !== undefined)?.rotation ?? stream.tags.rotate ?? 0;
   const lying = Math.abs(turn) % 180 === 90;
+  const wide = Math.round(stream.width * (rate(stream.sample_aspect_ratio) || 1));
   return {
-    width: lying ? stream.height : stream.width,
-    height: lying ? stream.width : stream.height,
+    width: lying ? stream.height : wide,
+    height: lying ? wide : stream.height,
     durationS,
     fps: rate(stream.avg_frame_rate) || rate(stream.r_frame_rate) || 25,
     codec: stream.codec_name,

@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import PgBoss from 'pg-boss';
 import type { Asset } from '#server/models/asset';
 import type { Database } from '#server/models/database';
+import { ownerless } from '#server/services/assets';
 import { Fault } from '#server/services/fault';
 import type { Log } from '#server/services/log';
 import type { IncomingFile, MediaCalls } from '#server/services/mediaCalls';
@@ -98,9 +99,10 @@ async function takeUp(
   await boss.purgeQueue(queue);
   const there = new Set(await readdir(folders.originals));
   for (const asset of await db.assets.findAll({ where: { state: ['waiting', 'working'] } })) {
-    if (there.has(asset.id)) await send(asset.id);
+    if (there.delete(asset.id)) await send(asset.id);
     else await asset.update({ state: 'failed', fault: 'The upload was lost in a crash: upload it again.' });
   }
+  for (const nobodys of there) await removeFile(join(folders.originals, nobodys));
 }
 
 async function ingest(
@@ -139,7 +141,8 @@ async function kindOf(file: IncomingFile): Promise<Asset['kind']> {
   if (what === 'video') return 'clip';
   if (file.bytes > uploadLimits.image)
     throw new MediaFault('This picture is larger than 25 MB: export it smaller.');
-  const { alpha } = await pictureFacts(file.path);
+  const { alpha, moves } = await pictureFacts(file.path);
+  if (moves) return 'clip';
   // What has see-through parts is a mark, as a rule; the Library can say otherwise.
   return alpha ? 'mark' : 'still';
 }
@@ -162,7 +165,14 @@ async function perform(
   settledEvents: EventEmitter,
 ): Promise<void> {
   const asset = await db.assets.findByPk(assetId);
-  if (!asset || asset.state === 'ready' || asset.state === 'failed') return;
+  const original = join(folders.originals, assetId);
+  if (!asset) {
+    // Removed from the Library before its turn came.
+    await removeFile(original);
+    settledEvents.emit(assetId);
+    return;
+  }
+  if (asset.state === 'ready' || asset.state === 'failed') return;
   await asset.update({ state: 'working', progress: 0 });
   let told = 0;
   const onProgress = (share: number) => {
@@ -176,7 +186,10 @@ async function perform(
   const threads = (await liveNow()) ? 1 : Math.min(4, availableParallelism());
   try {
     const made = await workAsset(asset, folders, { threads, signal, onProgress });
-    await asset.update({ ...made, state: 'ready', progress: 1, fault: null });
+    const ready = { ...made, state: 'ready' as const, progress: 1, fault: null };
+    const [kept] = await db.assets.update(ready, { where: { id: assetId } });
+    // Removed from the Library while it was worked on: then its files have no owner.
+    if (kept === 0) await dropFiles(db, folders, [made.file, made.posterFile]);
   } catch (error) {
     if (signal.aborted) throw error;
     const known = error instanceof MediaFault;
@@ -184,9 +197,13 @@ async function perform(
     const fault = known ? error.message : 'Something broke while this file was converted: upload it again.';
     await asset.update({ state: 'failed', fault });
   }
-  await removeFile(join(folders.originals, assetId));
+  await removeFile(original);
   onChange(asset.crewId);
   settledEvents.emit(assetId);
+}
+
+async function dropFiles(db: Database, folders: Folders, names: (string | null)[]): Promise<void> {
+  for (const name of await ownerless(db, names)) await removeFile(join(folders.media, name));
 }
 
 async function settled(db: Database, assetId: string, events: EventEmitter): Promise<Asset> {

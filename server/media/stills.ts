@@ -47,14 +47,23 @@ function faultOf(error: unknown): MediaFault {
   return new MediaFault('This picture is damaged: export it anew as PNG or JPEG.');
 }
 
-/** Whether a picture has see-through parts, and its size as it is seen. Throws a MediaFault. */
-export async function pictureFacts(path: string): Promise<{ alpha: boolean; width: number; height: number }> {
+/** What a picture is like before any work is done on it. */
+export interface PictureFacts {
+  /** It has see-through parts. */
+  alpha: boolean;
+  /** It is one of several that follow each other, as in a moving GIF. */
+  moves: boolean;
+}
+
+/** Looks at a picture. Throws a MediaFault. */
+export async function pictureFacts(path: string): Promise<PictureFacts> {
   try {
     const picture = await openPicture(path);
-    const { width = 0, height = 0, hasAlpha = false } = await picture.metadata();
-    if (!hasAlpha) return { alpha: false, width, height };
+    const { hasAlpha = false, pages = 1, format } = await picture.metadata();
+    const moves = format === 'gif' && pages > 1;
+    if (!hasAlpha) return { alpha: false, moves };
     const { isOpaque } = await picture.stats();
-    return { alpha: !isOpaque, width, height };
+    return { alpha: !isOpaque, moves };
   } catch (error) {
     throw faultOf(error);
   }

@@ -1,10 +1,13 @@
-import { faultOf, MediaFault } from './mediaFault';
+import { endsEarly, faultOf, MediaFault } from './mediaFault';
 import { probe, type VideoFacts } from './probe';
 import { run } from './run';
 import { posterArgs, secondsDone, transcodeArgs } from './transcodeArgs';
 
 /** A clip may take this many times its length, and ten minutes more, ms. */
 const limitOf = (facts: VideoFacts): number => facts.durationS * 1000 * 60 + 600_000;
+
+/** A cut that is shorter than this is no loss worth a refusal, s. */
+const shortByS = 0.5;
 
 /**
  * Makes the served file of a clip. Throws a MediaFault with a plain sentence; an AbortError's reason when asked to end.
@@ -30,7 +33,10 @@ export async function transcode(
   if (ended === 'time')
     throw new MediaFault('This video takes too long to convert: cut it or make it smaller.');
   if (code !== 0) throw faultOf(stderr);
-  return probe(to);
+  const made = await probe(to);
+  // ffmpeg takes a file that was cut off for a shorter one and is content.
+  if (endsEarly(stderr) && made.durationS < facts.durationS - shortByS) throw faultOf('truncated');
+  return made;
 }
 
 /** One frame of a clip as PNG. */

@@ -90,10 +90,14 @@ export async function deleteAsset(db: Database, crewId: string, id: string): Pro
       `The scene “${first.sceneName}”${uses.length > 1 ? ` and ${uses.length - 1} more` : ''} shows this file.`,
       'Take it out of the scene first.',
     );
-  const files = [row.file, row.posterFile].flatMap((name) => name ?? []);
   await row.destroy();
+  return ownerless(db, [row.file, row.posterFile]);
+}
+
+/** Which of these served files no row has. */
+export async function ownerless(db: Database, names: readonly (string | null)[]): Promise<string[]> {
   const free: string[] = [];
-  for (const name of files) {
+  for (const name of names.flatMap((one) => one ?? [])) {
     const others =
       (await db.assets.count({ where: { file: name } })) +
       (await db.assets.count({ where: { posterFile: name } }));

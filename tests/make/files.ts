@@ -33,6 +33,14 @@ export function phoneVideo(options: { seconds?: number; turned?: boolean } = {})
   return readFileSync(out);
 }
 
+/** A test picture of ffmpeg's in a container of choice, told by the ending of the name. Silent, 25 pictures a second. */
+export function plainVideo(name: string, seconds: number, ...more: string[]): Buffer {
+  const out = join(folder, name);
+  const picture = `testsrc2=s=320x180:r=25:d=${seconds}`;
+  execFileSync('ffmpeg', ['-v', 'error', '-y', '-f', 'lavfi', '-i', picture, ...more, out]);
+  return readFileSync(out);
+}
+
 /** A red disc on nothing. */
 export const discPng = (): Promise<Buffer> => sharp(Buffer.from(discSvg())).png().toBuffer();
 

@@ -1,4 +1,7 @@
-import { copyFileSync, existsSync, readdirSync } from 'node:fs';
+import { once } from 'node:events';
+import { copyFileSync, existsSync, readdirSync, watch } from 'node:fs';
+import { type IncomingMessage, request } from 'node:http';
+import { type AddressInfo, connect } from 'node:net';
 import { join } from 'node:path';
 import sharp from 'sharp';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
@@ -10,11 +13,20 @@ import { mediaRoutes } from '#server/routes/media';
 import { setUpLink } from '#server/services/accounts/setUp';
 import { makeLog } from '#server/services/log';
 import type { MediaCalls } from '#server/services/mediaCalls';
+import { tokenHash } from '#server/services/tokens';
 import type { Asset } from '#shared/api/assets';
 import { newBody, newLayer } from '#shared/scene/defaults';
 import { type Browser, makeTestApp, type TestApp } from '#tests/make/app';
 import { makeCrew, makeShow } from '#tests/make/crew';
-import { discPng, discSvg, phoneVideo, probeFile, turnedJpeg, writeTemp } from '#tests/make/files';
+import {
+  discPng,
+  discSvg,
+  phoneVideo,
+  plainVideo,
+  probeFile,
+  turnedJpeg,
+  writeTemp,
+} from '#tests/make/files';
 
 type Media = MediaCalls & { close: () => Promise<void> };
 
@@ -22,6 +34,8 @@ let house: TestApp;
 let media: Media;
 let lead: Browser;
 let crewId: string;
+/** The lead's cookies, for requests that are made by hand. */
+let cookies: string;
 const changed: string[] = [];
 
 /** Media jobs of a house; the routes get them through `late`, as they are made after the app. */
@@ -59,6 +73,8 @@ beforeAll(async () => {
     demo: false,
   });
   crewId = made.body.crew.id;
+  const given: unknown = made.headers['set-cookie'];
+  cookies = (Array.isArray(given) ? given.map(String) : []).map((one) => one.split(';')[0]).join('; ');
 });
 afterAll(async () => {
   await media.close();
@@ -110,6 +126,52 @@ describe('a video', () => {
     expect(asset.state).toBe('failed');
     expect(asset.fault).toMatch(/upload it again/);
   });
+
+  // Such a file opens and plays: only its end is missing, which ffmpeg does not count as a fault.
+  it.each([
+    ['cut.mp4', ['-movflags', '+faststart']],
+    ['cut.mkv', []],
+  ])('%s whose index is in front is not taken for a shorter one', async (name, more) => {
+    const whole = plainVideo(name, 4, ...more);
+    const asset = await upload(name, whole.subarray(0, Math.floor(whole.length * 0.5)));
+    expect([asset.state, asset.fault]).toEqual(['failed', 'This file ends in the middle: upload it again.']);
+  });
+
+  it('with pixels that are not square keeps its shape', async () => {
+    const asset = await upload('wide.mp4', plainVideo('wide.mp4', 1, '-vf', 'setsar=2'));
+    expect([asset.width, asset.height]).toEqual([640, 180]);
+  });
+
+  it('may be a GIF that moves', async () => {
+    const asset = await upload('waves.gif', plainVideo('waves.gif', 1));
+    expect(asset).toMatchObject({ kind: 'clip', state: 'ready', fps: 25, durationS: 1 });
+  });
+
+  it('without a picture fails with a sentence', async () => {
+    const sound = plainVideo('sound.mp4', 1, '-f', 'lavfi', '-i', 'sine=d=1', '-map', '1:a', '-c:a', 'aac');
+    const asset = await upload('sound.mp4', sound);
+    expect([asset.state, asset.fault]).toEqual(['failed', 'There is no picture in this file.']);
+  });
+
+  it('that is removed while it waits for its turn leaves nothing on disk', async () => {
+    const first = await send('first.mp4', plainVideo('first.mp4', 3)).expect(201);
+    const second = await send('second.mp4', plainVideo('second.mp4', 1)).expect(201);
+    const settled = media.settled(second.body.id);
+    await lead.delete(`/api/assets/${second.body.id}`).expect(204);
+    await expect(settled).rejects.toThrow('The file was removed.');
+    expect((await media.settled(first.body.id)).state).toBe('ready');
+    await expect.poll(() => readdirSync(join(house.dataFolder, 'originals'))).toEqual([]);
+  });
+
+  it('that is removed while it is converted leaves nothing on disk', async () => {
+    const before = readdirSync(media.mediaFolder).sort();
+    const { body } = await send('gone.mp4', plainVideo('gone.mp4', 3)).expect(201);
+    const settled = media.settled(body.id);
+    await lead.delete(`/api/assets/${body.id}`).expect(204);
+    await expect(settled).rejects.toThrow('The file was removed.');
+    expect(readdirSync(media.mediaFolder).sort()).toEqual(before);
+    await expect.poll(() => readdirSync(join(house.dataFolder, 'originals'))).toEqual([]);
+  });
 });
 
 describe('a picture', () => {
@@ -157,6 +219,41 @@ describe('what is no picture and no video', () => {
     expect([answer.status, answer.body.detail]).toEqual([415, 'This file is empty: upload it again.']);
   });
 
+  it('and an upload that is broken off leaves nothing', async () => {
+    const server = house.app.listen(0, '127.0.0.1');
+    await once(server, 'listening');
+    const { port } = server.address() as AddressInfo;
+    const head = ['POST /api/assets HTTP/1.1', 'host: 127.0.0.1:4646', `cookie: ${cookies}`];
+    const more = ['origin: http://127.0.0.1:4646', 'x-file-name: a.mp4', 'content-length: 900000', '', ''];
+    const socket = connect(port, '127.0.0.1');
+    const seen = new Promise<void>((resolve) => {
+      const watcher = watch(media.incomingFolder, () => {
+        watcher.close();
+        resolve();
+      });
+    });
+    socket.write([...head, ...more].join('\r\n'));
+    socket.write(Buffer.alloc(100_000));
+    await seen;
+    socket.destroy();
+    await expect.poll(() => readdirSync(media.incomingFolder)).toEqual([]);
+    server.close();
+  });
+
+  it('and one larger than 2 GB is refused before it is sent', async () => {
+    const server = house.app.listen(0, '127.0.0.1');
+    await once(server, 'listening');
+    const { port } = server.address() as AddressInfo;
+    const headers = { host: '127.0.0.1:4646', origin: 'http://127.0.0.1:4646', cookie: cookies };
+    const size = { 'x-file-name': 'a.mp4', 'content-length': String(3 * 1024 ** 3) };
+    const sent = request({ port, method: 'POST', path: '/api/assets', headers: { ...headers, ...size } });
+    sent.on('error', () => undefined).flushHeaders();
+    const [answer] = (await once(sent, 'response')) as [IncomingMessage];
+    expect(answer.statusCode).toBe(413);
+    sent.destroy();
+    server.close();
+  });
+
   it('and an upload without a name is refused', async () => {
     await lead.post('/api/assets').set('content-type', 'application/json').send({}).expect(400);
   });
@@ -192,20 +289,17 @@ describe('a served file', () => {
       .expect(401);
     const other = await makeCrew(house.db);
     const show = await makeShow(house.db, other.crewId, []);
-    const { tokenHash } = await import('#server/services/tokens');
-    const device = 'd'.repeat(43);
-    await house.db.displays.create({
-      id: 'foreign',
-      showId: show,
-      name: 'Foreign',
-      tokenHash: tokenHash(device),
-    });
-    const cookie = `lampyrid.display=${device}`;
-    await house
-      .browser()
-      .get(asset.url ?? '')
-      .set('cookie', cookie)
-      .expect(404);
+    const own = await makeShow(house.db, crewId, []);
+    for (const [showId, letter, status] of [
+      [show, 'd', 404],
+      [own, 'e', 200],
+    ] as const) {
+      const device = letter.repeat(43);
+      const row = { id: `display-${letter}`, showId, name: 'Wall', tokenHash: tokenHash(device) };
+      await house.db.displays.create(row);
+      const asked = house.browser().get(asset.url ?? '');
+      await asked.set('cookie', `lampyrid.display=${device}`).expect(status);
+    }
     for (const name of ['..%2f..%2fsession-secret', '%2e%2e', 'a.mp4', `${'a'.repeat(64)}.svg`])
       await lead.get(`/media/${name}`).expect(404);
   });
@@ -247,6 +341,31 @@ describe('a file in the Library', () => {
   });
 });
 
+describe('the Library', () => {
+  it('is read by assistants, who add and remove nothing', async () => {
+    const asset = await upload('y.png', await discPng());
+    await house.db.memberships.update({ role: 'assistant' }, { where: { crewId } });
+    try {
+      await lead.get('/api/assets').expect(200);
+      expect((await send('z.png', await discPng())).status).toBe(403);
+      await lead.delete(`/api/assets/${asset.id}`).expect(403);
+    } finally {
+      await house.db.memberships.update({ role: 'lead' }, { where: { crewId } });
+    }
+  });
+
+  it('has nothing of another crew', async () => {
+    const other = await makeCrew(house.db);
+    const row = { crewId: other.crewId, name: 'theirs', kind: 'still' as const, state: 'ready' as const };
+    await house.db.assets.create({ ...row, id: 'theirs' });
+    const { body } = await lead.get('/api/assets').expect(200);
+    expect((body as Asset[]).some(({ id }) => id === 'theirs')).toBe(false);
+    await lead.get('/api/assets/theirs').expect(404);
+    await lead.patch('/api/assets/theirs', { name: 'mine' }).expect(404);
+    await lead.delete('/api/assets/theirs').expect(404);
+  });
+});
+
 describe('after a crash', () => {
   it('work that was not done is taken up, and work without its upload says so', async () => {
     await media.close();
@@ -254,9 +373,11 @@ describe('after a crash', () => {
     const row = { crewId, name: 'left', kind: 'clip' as const, state: 'working' as const };
     await house.db.assets.create({ ...row, id: 'left-1' });
     await house.db.assets.create({ ...row, id: 'lost-1' });
-    copyFileSync(original, join(house.dataFolder, 'originals', 'left-1'));
+    for (const name of ['left-1', 'nobodys'])
+      copyFileSync(original, join(house.dataFolder, 'originals', name));
     media = await start();
     expect((await media.settled('left-1')).state).toBe('ready');
+    await expect.poll(() => readdirSync(join(house.dataFolder, 'originals'))).toEqual([]);
     const lost = await media.settled('lost-1');
     expect([lost.state, lost.fault]).toEqual(['failed', 'The upload was lost in a crash: upload it again.']);
   });
