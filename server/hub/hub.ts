@@ -16,9 +16,11 @@ import { type RoomKind, roomKindSchema } from '#shared/show/state';
 import { refusalWords } from '#shared/show/words';
 import { hubNow } from './hubClock';
 import { type Journal, makeJournal } from './journal';
-import { hubLimits } from './limits';
+import { hubLimits, makeDoor } from './limits';
 import { Room } from './room';
 import { makeSeat, type Seat } from './seat';
+import { speakerOf } from './speakers';
+import { makeTurns } from './turns';
 
 export interface HubOptions {
   store: HubStore;
@@ -57,18 +59,18 @@ export function createHub(options: HubOptions): Hub {
     clientTracking: false,
   });
   const rooms = new Map<string, Promise<Room>>();
+  /** Those that are open: one that is still being opened must never hold up the heartbeat of the others. */
+  const open = new Map<string, Room>();
   const seats = new Set<Seat>();
-  const byAddress = new Map<string, number>();
-  const opened = async (): Promise<Room[]> =>
-    (await Promise.allSettled(rooms.values())).flatMap((one) =>
-      one.status === 'fulfilled' ? [one.value] : [],
-    );
+  /** Sockets that are being looked up. */
+  const arriving = new Set<Duplex>();
+  const door = makeDoor(hubLimits.sockets, hubLimits.socketsPerAddress);
   const journal: Journal = makeJournal(store, join(options.dataDir, 'spill'), log, (durable) => {
-    void opened().then((all) => {
-      for (const room of all) room.tellDurable(durable);
-    });
+    for (const room of open.values()) room.tellDurable(durable);
   });
   let closing = false;
+  /** How often somebody's right was taken away, so that whoever is just being looked up is looked up again. */
+  let revoked = 0;
 
   const roomOf = (showId: string, room: RoomKind): Promise<Room> => {
     const key = `${showId}/${room}`;
@@ -77,43 +79,39 @@ export function createHub(options: HubOptions): Hub {
     const making = openRoom(options, journal, showId, room);
     rooms.set(key, making);
     // A room that could not be opened is tried anew by the next who comes.
-    making.catch(() => rooms.delete(key));
+    making.then(
+      (made) => open.set(key, made),
+      () => rooms.delete(key),
+    );
     return making;
   };
-  const ifOpen = (showId: string, work: (room: Room) => void | Promise<void>) => {
-    for (const kind of ['live', 'rehearsal'] as const)
-      rooms
-        .get(`${showId}/${kind}`)
-        ?.then(work)
-        .catch((error: unknown) => log.warn({ err: error, showId }, 'a room was not told'));
-  };
+  const inTurn = makeTurns((error, showId) => log.warn({ err: error, showId }, 'a room was not told'));
+  const tell = (showId: string, work: (room: Room) => void | Promise<void>) =>
+    inTurn(showId, async () => {
+      for (const kind of roomKindSchema.options) {
+        const room = rooms.get(`${showId}/${kind}`);
+        if (room) await work(await room);
+      }
+    });
   const refresh = (showId: string) =>
-    ifOpen(showId, async (room) => {
+    tell(showId, async (room) => {
       const show = await options.loadShow(showId);
-      if (show) room.refresh(show);
+      if (show) return room.refresh(show);
+      for (const map of [rooms, open]) map.delete(`${showId}/${room.kind}`);
+      room.end();
     });
   const sweep = setInterval(() => {
-    const now = hubNow();
-    for (const seat of seats) {
-      if (!seat.ready && now - seat.openedAt > linkTimes.hello) seat.close(closeCodes.badMessage, 'no hello');
-      else if (now - seat.heardAt > linkTimes.idle) seat.cut();
-    }
-    void opened().then((all) => {
-      for (const room of all) room.broadcast({ type: 'beat', hubNow: hubNow() });
-    });
+    cutSilent(seats, hubNow());
+    for (const room of open.values()) room.broadcast({ type: 'beat', hubNow: hubNow() });
   }, linkTimes.heartbeat);
   sweep.unref();
 
-  const seatAt = (socket: WebSocket, seat: Seat, room: Room, address: string) => {
+  const seatAt = (socket: WebSocket, seat: Seat, room: Room) => {
     seats.add(seat);
-    byAddress.set(address, (byAddress.get(address) ?? 0) + 1);
     socket.on('error', (error) => log.debug({ err: error }, 'socket'));
     socket.on('message', (data, isBinary) => hear(seat, room, data, isBinary));
     socket.on('close', () => {
       seats.delete(seat);
-      const left = (byAddress.get(address) ?? 1) - 1;
-      if (left > 0) byAddress.set(address, left);
-      else byAddress.delete(address);
       room.leave(seat);
     });
   };
@@ -122,11 +120,17 @@ export function createHub(options: HubOptions): Hub {
     const address = request.socket.remoteAddress ?? '';
     if (closing) return turnAway(socket, 503, 'The hub stops.');
     if (!options.allowedOrigin(request)) return turnAway(socket, 403, 'Not from a page of ours.');
-    if (seats.size >= hubLimits.sockets || (byAddress.get(address) ?? 0) >= hubLimits.socketsPerAddress)
-      return turnAway(socket, 429, 'Too many sockets.');
+    if (socket.destroyed) return;
+    if (!door.enter(address)) return turnAway(socket, 429, 'Too many sockets.');
+    arriving.add(socket);
+    socket.once('close', () => {
+      arriving.delete(socket);
+      door.leave(address);
+    });
     const url = new URL(request.url ?? '/', 'http://hub');
     const query = querySchema.safeParse(Object.fromEntries(url.searchParams));
     if (url.pathname !== '/hub' || !query.success) return turnAway(socket, 404, 'There is nothing here.');
+    const before = revoked;
     const who = await options.authorize(request);
     if (!who) return turnAway(socket, 401, 'Not signed in.');
     const refused = whyNot(who, query.data);
@@ -135,9 +139,11 @@ export function createHub(options: HubOptions): Hub {
     if (!show || (who.kind === 'crew' && who.crewId !== show.crewId))
       return turnAway(socket, 404, 'There is no such show.');
     const room = await roomOf(query.data.show, query.data.room);
+    if (closing || revoked !== before) return turnAway(socket, 503, 'Ask once more.');
+    arriving.delete(socket);
     sockets.handleUpgrade(request, socket, head, (made) => {
       const seat = makeSeat(made, socket, who, query.data.show, query.data.room, hubNow());
-      seatAt(made, seat, room, address);
+      seatAt(made, seat, room);
     });
   };
 
@@ -154,20 +160,38 @@ export function createHub(options: HubOptions): Hub {
     displaysChanged: refresh,
     modeChanged: refresh,
     mapSaved: (showId, displayId, version, map, by) =>
-      ifOpen(showId, (room) => room.mapSaved(displayId, version, map, by)),
+      tell(showId, (room) => room.mapSaved(displayId, version, map, by)),
     revoke: (whom) => {
+      revoked += 1;
       for (const seat of seats)
         if (meant(seat.who, whom)) seat.close(closeCodes.notAllowed, 'no longer allowed');
     },
     close: async () => {
       closing = true;
       clearInterval(sweep);
-      for (const room of await opened()) await room.close();
+      await Promise.all([...open.values()].map((room) => room.close()));
       await journal.close();
-      for (const seat of seats) seat.close(closeCodes.shuttingDown, 'shutting down');
+      await hangUp(seats);
+      for (const socket of arriving) socket.destroy();
       await store.close();
     },
   };
+}
+
+/** Ends sockets that never said hello, and cuts those that said nothing for long. */
+function cutSilent(seats: ReadonlySet<Seat>, now: number): void {
+  for (const seat of seats) {
+    if (!seat.ready && now - seat.openedAt > linkTimes.hello) seat.close(closeCodes.badMessage, 'no hello');
+    else if (now - seat.heardAt > linkTimes.idle) seat.cut();
+  }
+}
+
+/** Says goodbye to all; whoever has not answered after a second is cut. */
+async function hangUp(seats: ReadonlySet<Seat>): Promise<void> {
+  for (const seat of seats) seat.close(closeCodes.shuttingDown, 'shutting down');
+  const until = hubNow() + 1000;
+  while (seats.size > 0 && hubNow() < until) await new Promise((resolve) => setTimeout(resolve, 10));
+  for (const seat of seats) seat.cut();
 }
 
 async function openRoom(
@@ -247,15 +271,9 @@ function take(seat: Seat, room: Room, message: ToHub, now: number): void {
   if (message.type === 'time') return answerTime(seat, message.t1, now);
   if (!seat.ready) return junk(seat, null);
   if (message.type === 'command') return room.command(seat, message.command);
-  const displayId =
-    message.type === 'drawn'
-      ? message.drawn[0]?.displayId
-      : message.type === 'vitals'
-        ? message.vitals.displayId
-        : message.picture.displayId;
-  const one = message.type !== 'drawn' || message.drawn.every((drawn) => drawn.displayId === displayId);
-  if (displayId === undefined || !one || !room.speaksFor(seat, displayId)) return junk(seat, null);
-  room.report(seat, message);
+  const displayId = speakerOf(message);
+  if (displayId === null || !room.speaksFor(seat, displayId)) return junk(seat, null);
+  room.report(seat, message, displayId);
 }
 
 function parse(text: string): unknown {

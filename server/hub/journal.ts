@@ -48,13 +48,14 @@ export function makeJournal(
     log.warn({ durable: next }, 'where events are safe has changed');
     onDurable(next);
   };
-  const toDatabase = async (batch: readonly Waiting[]): Promise<boolean> => {
+  /** @returns the rows that the database will never take, or null while it is away */
+  const toDatabase = async (batch: readonly Waiting[]): Promise<ReadonlySet<EventRow> | null> => {
     try {
-      await store.append(batch.map(({ row }) => row));
-      return true;
+      const rows = batch.map(({ row }) => row);
+      return new Set(await write(store, rows, log));
     } catch (error) {
       log.warn({ err: error }, 'events did not reach the database');
-      return false;
+      return null;
     }
   };
   const toSpill = async (batch: readonly Waiting[]): Promise<boolean> => {
@@ -69,19 +70,22 @@ export function makeJournal(
       return false;
     }
   };
-  const keep = async (batch: readonly Waiting[]): Promise<boolean> => {
-    if (state === 'database' && (await toDatabase(batch))) return true;
+  const keep = async (batch: readonly Waiting[]): Promise<void> => {
+    const never = state === 'database' ? await toDatabase(batch) : null;
+    if (never) {
+      for (const { row, settle } of batch) settle(!never.has(row));
+      return;
+    }
     const kept = await toSpill(batch);
     become(kept ? 'spill' : 'none');
     again();
-    return kept;
+    for (const { settle } of batch) settle(kept);
   };
   const work = async (): Promise<void> => {
     while (waiting.length > 0) {
       const batch = waiting;
       waiting = [];
-      const kept = await keep(batch);
-      for (const { settle } of batch) settle(kept);
+      await keep(batch);
     }
   };
   const run = (job: () => Promise<void>): Promise<void> => {
@@ -92,6 +96,8 @@ export function makeJournal(
     return next;
   };
   const replay = async (): Promise<boolean> => {
+    // Asked beside the queue: a database that hangs must not hold up what goes to the file meanwhile.
+    if (state !== 'database' && !(await answers(store))) return false;
     let done = true;
     await run(async () => {
       done = await unspill(folder, store, log);
@@ -124,6 +130,44 @@ export function makeJournal(
   };
 }
 
+const answers = (store: Pick<HubStore, 'append'>): Promise<boolean> =>
+  store.append([]).then(
+    () => true,
+    () => false,
+  );
+
+/** Whether PostgreSQL objects to the data itself (SQLSTATE classes 22 and 23): sent again, it would object again. */
+const isDataFault = (error: unknown): boolean =>
+  error instanceof Error && 'code' in error && /^2[23]...$/.test(String(error.code));
+
+/**
+ * Writes rows, and when one of them is objected to, all the others.
+ * @returns the rows that the database will never take
+ * @throws when the database is away
+ */
+async function write(
+  store: Pick<HubStore, 'append'>,
+  rows: readonly EventRow[],
+  log: Log,
+): Promise<EventRow[]> {
+  try {
+    await store.append(rows);
+    return [];
+  } catch (error) {
+    if (!isDataFault(error)) throw error;
+    const [only] = rows;
+    if (rows.length === 1 && only) {
+      log.error({ err: error, row: only }, 'the database will never take this event');
+      return [only];
+    }
+    const half = Math.ceil(rows.length / 2);
+    return [
+      ...(await write(store, rows.slice(0, half), log)),
+      ...(await write(store, rows.slice(half), log)),
+    ];
+  }
+}
+
 const spillName = (row: EventRow): string => `${row.showId}.${row.room}.jsonl`;
 
 /** Appends rows to their rooms' spill files and syncs them to the disk. */
@@ -134,15 +178,28 @@ async function spill(folder: string, rows: readonly EventRow[]): Promise<void> {
   for (const [name, list] of byFile) {
     const file = await open(join(folder, name), 'a', 0o600);
     try {
-      await file.writeFile(list.map((row) => `${JSON.stringify(row)}\n`).join(''));
+      const isNew = (await file.stat()).size === 0;
+      // The leading line end keeps a line that a full disk has broken off apart from what comes after it.
+      await file.writeFile(`\n${list.map((row) => `${JSON.stringify(row)}\n`).join('')}`);
       await file.datasync();
+      if (isNew) await syncFolder(folder);
     } finally {
       await file.close();
     }
   }
 }
 
-/** Rows of a spill file. A last line that a power cut has broken is left out: it was never said to be kept. */
+/** Without this a power cut may take the name of a new file, however well its content was synced. fsync(2). */
+async function syncFolder(folder: string): Promise<void> {
+  const handle = await open(folder, 'r');
+  try {
+    await handle.sync();
+  } finally {
+    await handle.close();
+  }
+}
+
+/** Rows of a spill file. A line that was broken off is left out: it was never said to be kept. */
 function rowsOf(text: string): EventRow[] {
   return text.split('\n').flatMap((line) => {
     try {
@@ -162,7 +219,8 @@ async function unspill(folder: string, store: Pick<HubStore, 'append'>, log: Log
     const path = join(folder, name);
     try {
       const rows = rowsOf(await readFile(path, 'utf8'));
-      for (let at = 0; at < rows.length; at += mostRows) await store.append(rows.slice(at, at + mostRows));
+      for (let at = 0; at < rows.length; at += mostRows)
+        await write(store, rows.slice(at, at + mostRows), log);
       await rm(path);
     } catch (error) {
       log.warn({ err: error, name }, 'a spill file waits');

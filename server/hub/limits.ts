@@ -10,6 +10,8 @@ export const hubLimits = {
   commandsPerSecond: 40,
   draftsPerSecond: 120,
   othersPerSecond: 400,
+  /** Simulated displays that one page of a rehearsal may speak for. */
+  simulatedPerPage: 64,
   /** Least time between two pictures of a display and screen. */
   pictureMs: 400,
 } as const;
@@ -27,5 +29,32 @@ export function bucket(perSecond: number): (now: number) => boolean {
     if (tokens < 1) return false;
     tokens -= 1;
     return true;
+  };
+}
+
+/** Counts who is at the door or inside, so that many at once cannot slip in between asking and sitting down. */
+export interface Door {
+  /** Whether one more from this address may come in; if so it is counted until `leave`. */
+  enter: (address: string) => boolean;
+  leave: (address: string) => void;
+}
+
+export function makeDoor(most: number, mostPerAddress: number): Door {
+  const byAddress = new Map<string, number>();
+  let all = 0;
+  return {
+    enter: (address) => {
+      const here = byAddress.get(address) ?? 0;
+      if (all >= most || here >= mostPerAddress) return false;
+      all += 1;
+      byAddress.set(address, here + 1);
+      return true;
+    },
+    leave: (address) => {
+      all -= 1;
+      const left = (byAddress.get(address) ?? 1) - 1;
+      if (left > 0) byAddress.set(address, left);
+      else byAddress.delete(address);
+    },
   };
 }

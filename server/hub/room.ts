@@ -15,6 +15,7 @@ import { hubNow } from './hubClock';
 import type { Durable, Journal } from './journal';
 import { RoomDisplays } from './roomDisplays';
 import { encode, type Seat } from './seat';
+import { type Report, Speakers } from './speakers';
 
 export interface RoomParts {
   showId: string;
@@ -30,7 +31,8 @@ export interface RoomParts {
 
 interface Answered {
   landsAt: number | null;
-  kept: boolean | null;
+  /** Known once the event is in the database or the file. */
+  kept: boolean | Promise<boolean>;
 }
 
 /** Events that a page may have missed and still gets one by one. */
@@ -53,10 +55,13 @@ export class Room {
   private sinceSnapshot = 0;
   private readonly timers = new Map<string, ReturnType<typeof setTimeout>>();
   private readonly seenAt = new Map<string, number>();
+  private readonly speakers = new Speakers();
+  readonly kind: RoomKind;
   private closing = false;
 
   constructor(private readonly parts: RoomParts) {
     this.state = parts.opened.state;
+    this.kind = parts.room;
     this.show = parts.show;
     this.displays = new RoomDisplays(
       parts.room === 'live' ? Object.keys(parts.show.displayNames) : [],
@@ -78,6 +83,7 @@ export class Room {
   /** Takes a seat that has said hello. */
   join(seat: Seat, hello: Extract<ToHub, { type: 'hello' }>): void {
     if (hello.protocol !== protocolVersion) return seat.close(closeCodes.versionMismatch, 'version');
+    if (this.closing) return seat.close(closeCodes.shuttingDown, 'shutting down');
     const again = seat.ready;
     seat.ready = true;
     this.seats.add(seat);
@@ -145,8 +151,7 @@ export class Room {
       const { displayId } = seat.who;
       const elsewhere = [...this.seats].some((other) => other.by === displayId);
       if (!elsewhere) this.displays.setConnected(displayId, false, hubNow());
-    } else if (this.parts.room === 'rehearsal' && ![...this.seats].some((other) => other.who.kind === 'crew'))
-      for (const { displayId } of this.displays.statuses()) this.displays.forget(displayId);
+    } else for (const displayId of this.speakers.leave(seat)) this.displays.forget(displayId);
     this.later('displays', statusMs, () => this.tellDisplays());
   }
 
@@ -167,13 +172,9 @@ export class Room {
   /** Orders, stamps, applies and answers one command. */
   command(seat: Seat, command: Command): void {
     const { id: commandId, body } = command;
-    const before = this.answers.get(commandId);
-    if (before) {
-      seat.send({ type: 'taken', commandId, revision: null, landsAt: before.landsAt });
-      if (before.kept !== null) seat.send({ type: 'kept', commandId, kept: before.kept });
-      return;
-    }
     const now = hubNow();
+    const before = this.answers.get(commandId);
+    if (before) return this.repeat(seat, commandId, before, now);
     const draft = body.kind === 'map.draft';
     if (this.closing) return this.refuse(seat, commandId, 'shutting-down');
     if (!(draft ? seat.within.draft(now) : seat.within.command(now)))
@@ -184,13 +185,17 @@ export class Room {
     const [event] = decision.events.map((made) => this.stamp(made, now, commandId, seat.by));
     if (!event) return seat.send({ type: 'taken', commandId, revision: null, landsAt: null });
     const landsAt = event.body.kind === 'scene.fired' ? event.body.run.landsAt : null;
-    const answer: Answered = { landsAt, kept: null };
-    this.remember(commandId, answer);
     seat.send({ type: 'taken', commandId, revision: event.revision, landsAt });
-    void this.keep(event).then((kept) => {
-      answer.kept = kept;
-      seat.send({ type: 'kept', commandId, kept });
-    });
+    const kept = this.keep(event);
+    this.remember(commandId, { landsAt, kept });
+    void kept.then((sure) => seat.send({ type: 'kept', commandId, kept: sure }));
+  }
+
+  /** Answers a command that was taken before, perhaps over another socket. */
+  private repeat(seat: Seat, commandId: string, { landsAt, kept }: Answered, now: number): void {
+    if (!seat.within.other(now)) return;
+    seat.send({ type: 'taken', commandId, revision: null, landsAt });
+    void Promise.resolve(kept).then((sure) => seat.send({ type: 'kept', commandId, kept: sure }));
   }
 
   private refuse(seat: Seat, commandId: string, code: RefusalCode): void {
@@ -218,7 +223,8 @@ export class Room {
     const { showId, room } = this.parts;
     const kept = await this.parts.journal.append({ ...event, showId, room });
     this.sinceSnapshot += 1;
-    if (this.sinceSnapshot >= snapshotEvery) await this.snapshot();
+    // Beside the answer, never before it.
+    if (this.sinceSnapshot >= snapshotEvery) void this.snapshot();
     return kept;
   }
 
@@ -272,27 +278,31 @@ export class Room {
   }
 
   /** A report of a display that the seat speaks for. */
-  report(seat: Seat, message: Extract<ToHub, { type: 'vitals' | 'drawn' | 'picture' }>): void {
+  report(seat: Seat, message: Report, displayId: string): void {
     const now = hubNow();
+    if (seat.who.kind === 'crew' && !this.speakers.admit(seat, displayId)) return;
     if (message.type === 'vitals') {
       this.displays.vitals(message.vitals, seat.who.kind === 'crew', now);
-      if (seat.who.kind === 'display') this.noteSeen(message.vitals.displayId, message.vitals.raster, now);
+      if (seat.who.kind === 'display') this.noteSeen(displayId, message.vitals.raster, now);
       this.later('displays', statusMs, () => this.tellDisplays());
     } else if (message.type === 'picture') {
+      if (!this.hasScreen(message.picture.screenId)) return;
       if (this.displays.picture(message.picture, now)) this.toCrew(message);
     } else {
       const { showId, room, store, log } = this.parts;
-      const rows = this.displays.drawn(message.drawn, showId, room);
+      const rows = this.displays.drawn(message.drawn, showId, room, (id) => this.hasScreen(id));
       this.later('wall', wallMs, () => this.toCrew({ type: 'wall', wall: this.displays.wall() }));
-      const [first] = rows;
-      if (!first) return;
       const seq = Math.max(...rows.map((row) => row.seq));
-      const logged = () => seat.send({ type: 'logged', displayId: first.displayId, seq });
+      const logged = () => seat.send({ type: 'logged', displayId, seq });
       // A rehearsal leaves no trace in the record of the night.
       if (room === 'rehearsal') return logged();
       // Unanswered reports are sent again by the display: nothing is lost while the database is away.
       store.drawn(rows).then(logged, (error: unknown) => log.warn({ err: error }, 'drawn reports wait'));
     }
+  }
+
+  private hasScreen(screenId: string): boolean {
+    return this.show.manifest.screens.some(({ id }) => id === screenId);
   }
 
   private noteSeen(displayId: string, raster: readonly [number, number], now: number): void {
@@ -313,7 +323,7 @@ export class Room {
 
   /** Does a work once, `ms` after it was first asked for. */
   private later(name: string, ms: number, work: () => void): void {
-    if (this.timers.has(name)) return;
+    if (this.closing || this.timers.has(name)) return;
     this.timers.set(
       name,
       setTimeout(() => {
@@ -345,12 +355,22 @@ export class Room {
 
   tellDurable(durable: Durable): void {
     this.broadcast({ type: 'durable', durable });
+    // What could be kept nowhere while it was away is at least part of the state that is written down now.
+    if (durable === 'database') void this.snapshot();
   }
 
-  /** Takes no more commands, writes the state down, says goodbye. */
+  /** The show is no more: sends everybody away. */
+  end(): void {
+    this.closing = true;
+    for (const timer of this.timers.values()) clearTimeout(timer);
+    for (const seat of this.seats) seat.close(closeCodes.gone, 'this show is gone');
+  }
+
+  /** Takes no more commands, waits until all is kept and answered, writes the state down, says goodbye. */
   async close(): Promise<void> {
     this.closing = true;
     for (const timer of this.timers.values()) clearTimeout(timer);
+    await this.parts.journal.flush();
     await this.snapshot();
     for (const seat of this.seats) seat.close(closeCodes.shuttingDown, 'shutting down');
   }

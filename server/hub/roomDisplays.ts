@@ -80,9 +80,18 @@ export class RoomDisplays {
     if (vitals.linkMs !== null) known.links = [...known.links.slice(1 - keptLinks), vitals.linkMs];
   }
 
-  /** @returns rows for the as-run log */
-  drawn(list: readonly Drawn[], showId: string, room: RoomKind): DrawnRow[] {
+  /**
+   * Takes over what is on the wall, for screens that the show has.
+   * @returns rows for the as-run log
+   */
+  drawn(
+    list: readonly Drawn[],
+    showId: string,
+    room: RoomKind,
+    hasScreen: (id: string) => boolean,
+  ): DrawnRow[] {
     for (const { displayId, screenId, runId, at } of list) {
+      if (!hasScreen(screenId)) continue;
       const key = `${displayId}/${screenId}`;
       // A report that was kept on board may come after a newer one.
       if ((this.walls.get(key)?.at ?? Number.NEGATIVE_INFINITY) <= at)

@@ -63,6 +63,7 @@ function planRoutes(router: Router, { db, hub }: RouteContext): void {
       const displays = await db.displays.findAll({ where: { showId: param('id') }, attributes: ['id'] });
       await deleteShow(db, caller.crewId, param('id'));
       for (const { id } of displays) hub.revoke({ displayId: id });
+      hub.manifestChanged(param('id'));
       await audit(db, { caller, action: 'show.delete', object: param('id') });
     },
   );

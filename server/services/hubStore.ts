@@ -37,7 +37,10 @@ export interface OpenedRoom {
 /** The hub's way to the database. Everything rejects in three seconds at the latest. */
 export interface HubStore {
   open: (showId: string, room: RoomKind, now: number) => Promise<OpenedRoom>;
-  /** Writes events in one statement, committed when it resolves; rows that are there already stay. */
+  /**
+   * Writes events in one statement, committed when it resolves; rows that are there already stay, and rows of a show
+   * that is no more are left out. With no rows it only asks whether the database is there.
+   */
   append: (rows: readonly EventRow[]) => Promise<void>;
   snapshot: (state: ShowState) => Promise<void>;
   drawn: (rows: readonly DrawnRow[]) => Promise<void>;
@@ -100,14 +103,18 @@ export function makeHubStore(db: Database, databaseUrl: string): HubStore {
 }
 
 const appendSql = `insert into show_events (show_id, room, epoch, revision, at, command_id, by, body)
-select * from unnest($1::text[], $2::text[], $3::int[], $4::int[], $5::float8[], $6::text[], $7::text[], $8::jsonb[])
+select given.* from unnest($1::text[], $2::text[], $3::int[], $4::int[], $5::float8[], $6::text[], $7::text[], $8::jsonb[])
+  as given (show_id, room, epoch, revision, at, command_id, by, body)
+where exists (select 1 from shows where shows.id = given.show_id)
 on conflict do nothing`;
 
 const snapshotSql = `insert into snapshots (show_id, room, epoch, revision, state) values ($1, $2, $3, $4, $5)
 on conflict do nothing`;
 
 const drawnSql = `insert into as_run (show_id, room, display_id, seq, screen_id, run_id, scene_id, scene_version, at, late_ms)
-select * from unnest($1::text[], $2::text[], $3::text[], $4::int[], $5::text[], $6::text[], $7::text[], $8::int[], $9::float8[], $10::float8[])
+select given.* from unnest($1::text[], $2::text[], $3::text[], $4::int[], $5::text[], $6::text[], $7::text[], $8::int[], $9::float8[], $10::float8[])
+  as given (show_id, room, display_id, seq, screen_id, run_id, scene_id, scene_version, at, late_ms)
+where exists (select 1 from shows where shows.id = given.show_id)
 on conflict do nothing`;
 
 /** One connection that is made when first needed and again after it broke. */
@@ -128,19 +135,31 @@ function dedicated(databaseUrl: string) {
     });
     made.on('error', () => drop(made));
     made.on('end', () => drop(made));
-    await made.connect();
+    try {
+      await made.connect();
+    } catch (error) {
+      drop(made);
+      throw error;
+    }
     client = made;
     return made;
   };
+  const perform = async (name: string, text: string, values: unknown[]): Promise<void> => {
+    const at = await connect();
+    try {
+      await at.query({ name, text, values });
+    } catch (error) {
+      drop(at);
+      throw error;
+    }
+  };
+  let last: Promise<unknown> = Promise.resolve();
   return {
-    query: async (name: string, text: string, values: unknown[]): Promise<void> => {
-      const at = await connect();
-      try {
-        await at.query({ name, text, values });
-      } catch (error) {
-        drop(at);
-        throw error;
-      }
+    /** One at a time: a connection carries one statement, and two callers must not both make one. */
+    query: (name: string, text: string, values: unknown[]): Promise<void> => {
+      const next = last.then(() => perform(name, text, values));
+      last = next.catch(() => undefined);
+      return next;
     },
     close: async (): Promise<void> => {
       if (client) await client.end();

@@ -41,6 +41,9 @@ export const identifyMs = 8000;
 /** Tempo range of the beat clock, beats a minute. */
 export const tempoRange = { least: 20, most: 300 } as const;
 
+/** What calms or darkens the wall works after the show too: displays still hang there, drawing. */
+const alwaysTaken: ReadonlySet<CommandKind> = new Set(['blackout.set', 'calm.set']);
+
 type Body<K extends CommandKind> = Extract<CommandBody, { kind: K }>;
 type Deciders = {
   [K in CommandKind]: (state: ShowState, body: Body<K>, context: DecideContext) => Decision;
@@ -163,7 +166,7 @@ const deciders: Deciders = {
 export const decide = (state: ShowState, command: Command, context: DecideContext): Decision => {
   const { body, expiresAt } = command;
   if (!may(context.principal, `command:${body.kind}`)) return refuse('not-allowed');
-  if (context.mode === 'closed') return refuse('show-closed');
+  if (context.mode === 'closed' && !alwaysTaken.has(body.kind)) return refuse('show-closed');
   if (expiresAt < context.now) return refuse('expired');
   if (expiresAt > context.now + longestLife) return refuse('bad-command');
   const decider = deciders[body.kind] as (
