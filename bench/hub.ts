@@ -1,4 +1,4 @@
-import { fork } from 'node:child_process';
+import { type ChildProcess, fork } from 'node:child_process';
 import { once } from 'node:events';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
@@ -13,11 +13,13 @@ import type { CrowdOrder, CrowdReport } from './support/crowd';
 /*
  * Fan-out of one command to N receivers in another process: our hub (roles, schema, decision, reducer, journal in real
  * PostgreSQL) beside bare ws, which only parses, numbers and sends on, and beside a general-purpose socket library that
- * does the same. Rounds take turns, so that other work on the machine falls on all alike.
+ * does the same. All three answer the time, which every page asks each second. Rounds take turns on servers that are
+ * warm, so that other work on the machine and the compiler fall on all alike.
  */
 const sizes = [10, 50, 200] as const;
 const rounds = 3;
-const commands = 60;
+const commands = 50;
+const warmUp = 10;
 const pace = 40;
 
 interface Stand {
@@ -54,7 +56,11 @@ async function bareStand(): Promise<Stand> {
   let revision = 0;
   sockets.on('connection', (socket) => {
     socket.on('message', (data) => {
-      const { command } = JSON.parse(data.toString());
+      const message = JSON.parse(data.toString());
+      const at = now();
+      if (message.type === 'time')
+        return socket.send(JSON.stringify({ type: 'time', t1: message.t1, t2: at, t3: now() }));
+      const { command } = message;
       revision += 1;
       const frame = Buffer.from(JSON.stringify(eventOf(command, revision)));
       for (const client of sockets.clients) client.send(frame, { binary: false });
@@ -76,6 +82,7 @@ async function generalStand(): Promise<Stand> {
   const server = new GeneralServer(http, { transports: ['websocket'] });
   let revision = 0;
   server.on('connection', (socket) => {
+    socket.on('time', ({ t1 }) => socket.emit('time', { t1, t2: now(), t3: now() }));
     socket.on('command', ({ command }) => {
       revision += 1;
       server.emit('event', eventOf(command, revision));
@@ -97,12 +104,9 @@ async function hubStand(): Promise<Stand> {
   };
 }
 
-async function measure(stand: Stand, receivers: number): Promise<Figure> {
-  const child = fork(fileURLToPath(new URL('./support/crowd.ts', import.meta.url)), {
-    execArgv: ['--import', 'tsx'],
-  });
+async function measure(child: ChildProcess, stand: Stand, receivers: number): Promise<Figure> {
   const { kind, url, headers } = stand;
-  child.send({ kind, url, headers, receivers, commands, pace } satisfies CrowdOrder);
+  child.send({ kind, url, headers, receivers, commands, warmUp, pace } satisfies CrowdOrder);
   await once(child, 'message');
   const before = process.cpuUsage();
   child.send('go');
@@ -124,14 +128,14 @@ const round = (value: number): number => Math.round(value * 100) / 100;
 async function main(): Promise<void> {
   const drop = await makeTemplate(migrate);
   const rows = [];
+  const child = fork(fileURLToPath(new URL('./support/crowd.ts', import.meta.url)), {
+    execArgv: ['--import', 'tsx'],
+  });
+  const stands = [await bareStand(), await hubStand(), await generalStand()];
   for (const n of sizes) {
     const figures: Record<CrowdOrder['kind'], Figure[]> = { hub: [], ws: [], 'socket.io': [] };
     for (let one = 0; one < rounds; one += 1)
-      for (const make of [bareStand, hubStand, generalStand]) {
-        const stand = await make();
-        figures[stand.kind].push(await measure(stand, n));
-        await stand.close();
-      }
+      for (const stand of stands) figures[stand.kind].push(await measure(child, stand, n));
     const of = (kind: CrowdOrder['kind'], pick: keyof Figure) =>
       median(figures[kind].map((figure) => figure[pick]));
     const ratio = (pick: keyof Figure, to: CrowdOrder['kind']) => round(of('hub', pick) / of(to, pick));
@@ -148,6 +152,8 @@ async function main(): Promise<void> {
     });
     process.stderr.write(`${JSON.stringify(rows.at(-1))}\n`);
   }
+  child.disconnect();
+  for (const stand of stands) await stand.close();
   await drop();
   process.stdout.write(`${JSON.stringify({ bench: 'hub', commands, pace, rounds, rows })}\n`);
 }
