@@ -1,7 +1,7 @@
 import type { Database } from '#server/models/database';
 import type { Asset } from '#shared/api/assets';
+import { assetsOfBody } from '#shared/scene/sourceFiles';
 import { listScenesOfShows } from './shows/scenes';
-import { assetsOfBody } from './shows/sourceFiles';
 
 /** Scenes that use each file of a crew, by the file's id. */
 export async function assetUses(db: Database, crewId: string): Promise<Map<string, Asset['uses']>> {

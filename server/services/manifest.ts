@@ -5,9 +5,9 @@ import type { Database } from '#server/models/database';
 import type { OutputMap } from '#shared/mapping/schema';
 import type { Manifest, ManifestAsset } from '#shared/protocol/messages';
 import type { Scene } from '#shared/scene/schema';
+import { assetsOfBody } from '#shared/scene/sourceFiles';
 import { newestMaps } from './displays/displays';
 import { listScenes } from './shows/scenes';
-import { assetsOfBody } from './shows/sourceFiles';
 
 /** What the hub needs to know of a show. */
 export interface HubShow {

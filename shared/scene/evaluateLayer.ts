@@ -1,4 +1,4 @@
-import { barsInSeconds } from '../time/beatClock';
+import { beatsPerBar, rateForBars } from '../time/beatClock';
 import { rgbOf } from './colour';
 import type { DrawItem, DrawSource } from './drawingList';
 import { chance, shuffled } from './noise';
@@ -41,10 +41,10 @@ const clip: Kinds['clip'] = (source, layer, { beat, timeS, bpm, durationOf }) =>
   if (!source.assetId) return [];
   const length = durationOf(source.assetId);
   if (!length) return [];
-  const fitted = source.fitBars !== null;
-  const rate = fitted ? length / barsInSeconds(source.fitBars ?? 1, bpm) : source.rate;
+  const { fitBars } = source;
+  const rate = fitBars === null ? source.rate : rateForBars(length, fitBars, bpm);
   // Fitted clips turn with the beat clock, so that a change of tempo bends their speed and not their place.
-  const along = fitted ? (beat / ((source.fitBars ?? 1) * 4)) * length : timeS * source.rate;
+  const along = fitBars === null ? timeS * source.rate : (beat / (fitBars * beatsPerBar)) * length;
   return [placed(layer, { kind: 'clip', assetId: source.assetId, positionS: positive(along, length), rate })];
 };
 

@@ -3,10 +3,10 @@ import type { Database } from '#server/models/database';
 import type { Scene as SceneRow } from '#server/models/scene';
 import type { SceneVersion } from '#shared/api/shows';
 import type { Scene, SceneBody } from '#shared/scene/schema';
+import { filesOfSource } from '#shared/scene/sourceFiles';
 import { Fault, notFound } from '../fault';
 import { newId } from '../tokens';
 import type { Caller } from '../who';
-import { filesOfSource } from './sourceFiles';
 
 /** What a person writes of a scene. */
 export interface SceneDraft {

@@ -1,10 +1,11 @@
 import { useId } from 'react';
+import { wholeRaster } from '#shared/mapping/rectangle';
 import type { OutputMap, Region } from '#shared/mapping/schema';
 import type { Screen } from '#shared/venue/schema';
 import { Button } from '@/components/Button';
 import { Slider } from '@/components/Slider';
 import { NumberBox } from './NumberBox';
-import { cornerNames, inShape, wholeRaster, withCorner } from './regionEdits';
+import { cornerNames, inShape, withCorner } from './regionEdits';
 
 interface Props {
   region: Region;

@@ -1,19 +1,9 @@
+import { rectangle } from '#shared/mapping/rectangle';
 import type { Corners, OutputMap, PixelPoint, Region } from '#shared/mapping/schema';
 import type { Screen } from '#shared/venue/schema';
 
 /** Names of the corners in their order, as the audience sees the picture. */
 export const cornerNames = ['top left', 'top right', 'bottom right', 'bottom left'] as const;
-
-/** A rectangle's corners. Pixels. */
-export const rectangle = (x: number, y: number, width: number, height: number): Corners => [
-  [x, y],
-  [x + width, y],
-  [x + width, y + height],
-  [x, y + height],
-];
-
-/** The whole raster. */
-export const wholeRaster = ([width, height]: OutputMap['raster']): Corners => rectangle(0, 0, width, height);
 
 /** The largest rectangle of a screen's shape, centred, on `share` of the raster. */
 export const inShape = (

@@ -29,10 +29,3 @@ export const removeDial = (body: SceneBody, index: number): SceneBody => ({
     return { ...layer, dial: layer.dial === index ? null : layer.dial - 1 };
   }),
 });
-
-/** Ids of every file a body draws. */
-export const filesOf = (body: SceneBody): string[] =>
-  body.layers.flatMap(({ source }) => {
-    if (source.kind === 'stills') return source.assetIds;
-    return 'assetId' in source && source.assetId ? [source.assetId] : [];
-  });

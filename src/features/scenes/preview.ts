@@ -1,13 +1,13 @@
 import type { Asset } from '#shared/api/assets';
-import type { OutputMap } from '#shared/mapping/schema';
+import { wholeMap } from '#shared/mapping/rectangle';
 import { evaluateScreen, sceneKey } from '#shared/scene/evaluate';
 import type { SceneBody } from '#shared/scene/schema';
+import { assetsOfBody } from '#shared/scene/sourceFiles';
 import { startState } from '#shared/show/reduce';
 import type { SceneRun, ShowState } from '#shared/show/state';
 import { reanchor } from '#shared/time/beatClock';
 import { createFileStore } from '@/stage/fileStore';
 import { createStage } from '@/stage/stage';
-import { filesOf } from './bodyEdits';
 import { drawable } from './drawable';
 
 const screenId = 'preview';
@@ -44,25 +44,6 @@ export const rasterOf = ({ width, height }: { width: number; height: number }): 
   return [Math.max(16, Math.round(width * scale)), Math.max(16, Math.round(height * scale))];
 };
 
-const wholeMap = ([w, h]: [number, number]): OutputMap => ({
-  raster: [w, h],
-  regions: [
-    {
-      id: 'whole',
-      screenId,
-      name: 'whole',
-      source: { x: 0, y: 0, w: 1, h: 1 },
-      corners: [
-        [0, 0],
-        [w, 0],
-        [w, h],
-        [0, h],
-      ],
-      brightness: 1,
-    },
-  ],
-});
-
 /**
  * Draws a scene that isn't saved with the renderer of the displays, on a clock of its own that can be paused.
  * @returns stops it and frees what it held
@@ -88,7 +69,7 @@ export const startPreview = (canvas: HTMLCanvasElement, input: () => PreviewInpu
       wanted = assets;
       seen = body;
       // Only what this scene shows: a library may be gigabytes.
-      const used = new Set(filesOf(body));
+      const used = new Set(assetsOfBody(body));
       files.want(drawable(assets).filter(({ id }) => used.has(id)));
     }
     const raster = rasterOf(metres);
@@ -109,7 +90,7 @@ export const startPreview = (canvas: HTMLCanvasElement, input: () => PreviewInpu
     });
     stage.draw({
       frames: [drawn],
-      map: wholeMap(raster),
+      map: wholeMap(screenId, raster),
       screenSizes: { [screenId]: metres },
       hubNow: t,
       paused: !playing,

@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { newBody, newLayer } from '#shared/scene/defaults';
 import { sceneBodySchema } from '#shared/scene/schema';
-import { filesOf, moveLayer, removeDial } from '@/features/scenes/bodyEdits';
+import { assetsOfBody } from '#shared/scene/sourceFiles';
+import { moveLayer, removeDial } from '@/features/scenes/bodyEdits';
 import { begin, change, redo, undo } from '@/features/scenes/history';
 import { lackOf } from '@/features/scenes/lack';
 
@@ -68,7 +69,7 @@ describe('edits of a body', () => {
       { ...clip, source: { ...clip.source, assetId: 'three' } },
       newLayer('mark', 'm'),
     ];
-    expect(filesOf({ ...newBody(), layers })).toEqual(['one', 'two', 'three']);
+    expect(assetsOfBody({ ...newBody(), layers })).toEqual(['one', 'two', 'three']);
   });
 });
 

@@ -1,4 +1,4 @@
-import type { SceneBody, Source } from '#shared/scene/schema';
+import type { SceneBody, Source } from './schema';
 
 /** Ids of the Library's files that a layer's source uses, in its order. */
 export const filesOfSource = (source: Source): readonly string[] => {
