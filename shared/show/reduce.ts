@@ -1,11 +1,19 @@
 import type { EventBody, ShowEvent } from './events';
-import type { ScreenRun, ShowState } from './state';
+import type { SceneRun, ScreenRun, ShowState } from './state';
 
 export const emptyScreen: ScreenRun = { previous: null, current: null, next: null };
 
 /** A screen's run with everything that has landed by `t` moved down: next → current → previous. Pure. */
 export const settle = (run: ScreenRun, t: number): ScreenRun =>
   run.next && run.next.landsAt <= t ? { previous: run.current, current: run.next, next: null } : run;
+
+/** A run of a screen by its id, wherever it stands at hub time `t`; null when the screen has moved on. */
+export const findRun = (state: ShowState, screenId: string, runId: string, t: number): SceneRun | null => {
+  const screen = state.screens[screenId];
+  if (!screen) return null;
+  const { previous, current, next } = settle(screen, t);
+  return [current, next, previous].find((run) => run?.runId === runId) ?? null;
+};
 
 /** The state of a show before its first event. */
 export const startState = (showId: string, room: ShowState['room'], at: number): ShowState => ({

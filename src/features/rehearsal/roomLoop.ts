@@ -1,5 +1,5 @@
 import type { OutputMap } from '#shared/mapping/schema';
-import { evaluateScreen, sceneBodies } from '#shared/scene/evaluate';
+import { type Drawable, drawableOf, evaluateMap } from '#shared/scene/evaluateMap';
 import type { ShowLink } from '@/link/types';
 import { createFileStore } from '@/stage/fileStore';
 import { pictureData } from '@/stage/pictureData';
@@ -20,7 +20,7 @@ export const startRoom = (canvas: HTMLCanvasElement, link: ShowLink, view: () =>
   const stage = createStage(canvas, files);
   const displays = createSimulatedDisplays(link);
   let manifestRevision = '';
-  let bodies: ReturnType<typeof sceneBodies> = new Map();
+  let drawable: Drawable | null = null;
   let size = '';
   let lastPictures = 0;
   let reading = false;
@@ -41,9 +41,9 @@ export const startRoom = (canvas: HTMLCanvasElement, link: ShowLink, view: () =>
     handle = requestAnimationFrame(draw);
     const { state, manifest } = link.getSnapshot();
     if (!state || !manifest) return;
-    if (manifest.revision !== manifestRevision) {
+    if (!drawable || manifest.revision !== manifestRevision) {
       manifestRevision = manifest.revision;
-      bodies = sceneBodies(manifest);
+      drawable = drawableOf(manifest);
       files.want(manifest.assets);
     }
     const map = view();
@@ -52,24 +52,11 @@ export const startRoom = (canvas: HTMLCanvasElement, link: ShowLink, view: () =>
       stage.resize(...map.raster);
     }
     const at = link.hubTimeOf(performanceMs);
-    const assets = new Map(manifest.assets.map((asset) => [asset.id, asset]));
-    const screens = manifest.screens.filter((screen) =>
-      map.regions.some((region) => region.screenId === screen.id),
-    );
-    const frames = screens.map((screen) =>
-      evaluateScreen({
-        state,
-        screenId: screen.id,
-        aspect: screen.width / screen.height,
-        bodies,
-        assets,
-        t: at,
-      }),
-    );
+    const { frames, screenSizes } = evaluateMap(drawable, state, map, at);
     stage.draw({
       frames,
       map,
-      screenSizes: Object.fromEntries(screens.map((screen) => [screen.id, screen])),
+      screenSizes,
       hubNow: at,
       paused: state.freeze.on,
       lineUp: false,

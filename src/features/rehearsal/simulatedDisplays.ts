@@ -1,18 +1,11 @@
 import type { Picture } from '#shared/protocol/messages';
 import type { ScreenFrame } from '#shared/scene/drawingList';
-import { settle } from '#shared/show/reduce';
-import type { SceneRun, ShowState } from '#shared/show/state';
+import type { ShowState } from '#shared/show/state';
+import { drawnReporter } from '@/link/drawnReporter';
 import type { ShowLink } from '@/link/types';
 
 /** A simulated display for each screen: the rehearsal room takes ids that begin so. */
 export const simulatedId = (screenId: string): string => `sim-${screenId}`.slice(0, 64);
-
-const runOf = (state: ShowState, screenId: string, runId: string, at: number): SceneRun | null => {
-  const screen = state.screens[screenId];
-  if (!screen) return null;
-  const { previous, current, next } = settle(screen, at);
-  return [current, next, previous].find((run) => run?.runId === runId) ?? null;
-};
 
 export interface FrameFacts {
   frames: readonly ScreenFrame[];
@@ -30,7 +23,6 @@ const second = 1000;
 
 /** Speaks for the simulated displays as joined ones do: first frames of runs at once, vitals each second. */
 export const createSimulatedDisplays = (link: ShowLink) => {
-  const shown = new Map<string, string | null>();
   const started = performance.now();
   let changes = 0;
   let windowStart = started;
@@ -38,22 +30,7 @@ export const createSimulatedDisplays = (link: ShowLink) => {
   let last = started;
   let longest = 0;
 
-  const reportRuns = ({ frames, state, at }: FrameFacts): void => {
-    for (const { screenId, runId } of frames) {
-      if (shown.get(screenId) === runId || (runId === null && !shown.has(screenId))) continue;
-      shown.set(screenId, runId);
-      const run = runId === null ? null : runOf(state, screenId, runId, at);
-      link.reportDrawn({
-        displayId: simulatedId(screenId),
-        screenId,
-        runId,
-        sceneId: run?.sceneId ?? null,
-        sceneVersion: run?.version ?? null,
-        at,
-        lateMs: run ? at - run.landsAt : 0,
-      });
-    }
-  };
+  const reportRuns = drawnReporter(link, simulatedId);
 
   const reportVitals = (facts: FrameFacts): void => {
     const span = facts.performanceMs - windowStart;
@@ -87,7 +64,7 @@ export const createSimulatedDisplays = (link: ShowLink) => {
       drawn += 1;
       longest = Math.max(longest, facts.performanceMs - last);
       last = facts.performanceMs;
-      reportRuns(facts);
+      reportRuns(facts.frames, facts.state, facts.at);
       reportVitals(facts);
     },
     picture(screenId: string, at: number, data: string): void {

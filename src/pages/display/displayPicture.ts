@@ -1,13 +1,14 @@
 import type { OutputMap } from '#shared/mapping/schema';
 import type { ScreenFrame } from '#shared/scene/drawingList';
-import { evaluateScreen, sceneBodies } from '#shared/scene/evaluate';
+import { type Drawable, drawableOf, evaluateMap } from '#shared/scene/evaluateMap';
+import { drawnReporter } from '@/link/drawnReporter';
 import type { ShowLink } from '@/link/types';
 import { createFileStore } from '@/stage/fileStore';
 import { pictureData } from '@/stage/pictureData';
 import { createStage } from '@/stage/stage';
 import { CanvasHealth, Stillness } from './health';
 import { type Known, recall } from './lastPicture';
-import { ChangeCounter, drawnReporter } from './reports';
+import { ChangeCounter } from './reports';
 
 /** Longest side of the small pictures for the skyline, px, and how often they are made, ms. */
 const small = { side: 160, everyMs: 1000 } as const;
@@ -24,7 +25,7 @@ export class DisplayPicture {
   private readonly stage;
   private readonly reportDrawn;
   private readonly kept: Known | null;
-  private bodies: ReturnType<typeof sceneBodies> = new Map();
+  private drawable: Drawable | null = null;
   private revision = '';
   private draft: OutputMap | null = null;
   private lastMap: OutputMap | null = null;
@@ -38,7 +39,7 @@ export class DisplayPicture {
     private readonly onFault: (error: unknown) => void,
   ) {
     this.stage = createStage(canvas, this.files);
-    this.reportDrawn = drawnReporter(link, displayId);
+    this.reportDrawn = drawnReporter(link, () => displayId);
     this.kept = recall(displayId);
   }
 
@@ -73,25 +74,19 @@ export class DisplayPicture {
       this.lastMap = map;
       this.draft = null;
     }
-    if (manifest.revision !== this.revision) {
+    if (!this.drawable || manifest.revision !== this.revision) {
       this.revision = manifest.revision;
-      this.bodies = sceneBodies(manifest);
+      this.drawable = drawableOf(manifest);
       this.files.want(manifest.assets);
     }
     this.fitWindow();
     const shown = this.draft ?? map;
     const t = this.link.hubTimeOf(performanceMs);
-    const assets = new Map(manifest.assets.map((asset) => [asset.id, asset]));
-    const screens = manifest.screens.filter(({ id }) =>
-      shown.regions.some((region) => region.screenId === id),
-    );
-    const frames = screens.map(({ id: screenId, width, height }) =>
-      evaluateScreen({ state, screenId, aspect: width / height, bodies: this.bodies, assets, t }),
-    );
+    const { frames, screenSizes } = evaluateMap(this.drawable, state, shown, t);
     this.stage.draw({
       frames,
       map: shown,
-      screenSizes: Object.fromEntries(screens.map((screen) => [screen.id, screen])),
+      screenSizes,
       hubNow: t,
       paused: state.freeze.on,
       lineUp: state.lineUp.includes(this.displayId),

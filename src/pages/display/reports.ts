@@ -1,37 +1,5 @@
 import type { Vitals } from '#shared/protocol/messages';
-import type { ScreenFrame } from '#shared/scene/drawingList';
-import { settle } from '#shared/show/reduce';
-import type { SceneRun, ShowState } from '#shared/show/state';
-import type { ShowLink } from '@/link/types';
 import type { StagePicture } from '@/stage/types';
-
-const runOf = (state: ShowState, screenId: string, runId: string, at: number): SceneRun | null => {
-  const screen = state.screens[screenId];
-  if (!screen) return null;
-  const { previous, current, next } = settle(screen, at);
-  return [current, next, previous].find((run) => run?.runId === runId) ?? null;
-};
-
-/** Reports the first frame of each run on each screen, from what was drawn. */
-export function drawnReporter(link: ShowLink, displayId: string) {
-  const shown = new Map<string, string | null>();
-  return (frames: readonly ScreenFrame[], state: ShowState, at: number): void => {
-    for (const { screenId, runId } of frames) {
-      if (shown.get(screenId) === runId || (runId === null && !shown.has(screenId))) continue;
-      shown.set(screenId, runId);
-      const run = runId === null ? null : runOf(state, screenId, runId, at);
-      link.reportDrawn({
-        displayId,
-        screenId,
-        runId,
-        sceneId: run?.sceneId ?? null,
-        sceneVersion: run?.version ?? null,
-        at,
-        lateMs: run ? at - run.landsAt : 0,
-      });
-    }
-  };
-}
 
 /** Counts frames and the longest gap between two of them. */
 export class FrameMeter {
