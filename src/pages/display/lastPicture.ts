@@ -20,24 +20,24 @@ const keptSchema = z.object({
   name: z.string(),
 });
 
-/** What this display last knew, so that a reload while the hub is away goes on with the picture. */
-export function recall(displayId: string): Known | null {
+function read(): z.infer<typeof keptSchema> | null {
   try {
-    const kept = keptSchema.safeParse(JSON.parse(localStorage.getItem(key) ?? 'null'));
-    return kept.success && kept.data.displayId === displayId ? kept.data : null;
+    return keptSchema.safeParse(JSON.parse(localStorage.getItem(key) ?? 'null')).data ?? null;
   } catch {
     return null;
   }
 }
 
+/** What this display last knew, so that a reload while the hub is away goes on with the picture. */
+export function recall(displayId: string): Known | null {
+  const kept = read();
+  return kept?.displayId === displayId ? kept : null;
+}
+
 /** Which display this browser last was. */
 export function recallDisplay(): { displayId: string; showId: string } | null {
-  try {
-    const kept = keptSchema.safeParse(JSON.parse(localStorage.getItem(key) ?? 'null'));
-    return kept.success ? { displayId: kept.data.displayId, showId: kept.data.state.showId } : null;
-  } catch {
-    return null;
-  }
+  const kept = read();
+  return kept && { displayId: kept.displayId, showId: kept.state.showId };
 }
 
 export function remember(displayId: string, known: Known): void {

@@ -1,10 +1,8 @@
-import { z } from 'zod';
+import { selfSchema } from '#shared/api/displays';
 import { call, wait } from './call';
 import { forget, recallDisplay } from './lastPicture';
 import { hide, pair, showAway } from './pairing';
 import { type Self, showDisplay } from './showDisplay';
-
-const selfSchema = z.object({ displayId: z.string(), showId: z.string() });
 
 /** A display that has a picture of its own goes on with it when the server takes longer than this to answer, ms. */
 const picturedMs = 700;

@@ -1,13 +1,5 @@
-import { z } from 'zod';
+import { pairingSchema, pairingStateSchema } from '#shared/api/displays';
 import { call, wait } from './call';
-
-const askedSchema = z.object({
-  code: z.string(),
-  deviceSecret: z.string(),
-  expiresAt: z.string(),
-  intervalMs: z.number(),
-});
-const stateSchema = z.object({ state: z.enum(['pending', 'slow-down', 'expired', 'joined']) });
 
 /** While the server does not answer, it is asked again this often, ms. */
 const awayMs = 2000;
@@ -54,7 +46,7 @@ async function untilJoined(deviceSecret: string, intervalMs: number): Promise<bo
   for (;;) {
     await wait(pause);
     const { status, body } = await call('POST', '/api/pairing/wait', { deviceSecret });
-    const answer = stateSchema.safeParse(body);
+    const answer = pairingStateSchema.safeParse(body);
     if (status === 200 && answer.success) {
       if (answer.data.state === 'joined') return true;
       if (answer.data.state === 'expired') return false;
@@ -67,7 +59,7 @@ async function untilJoined(deviceSecret: string, intervalMs: number): Promise<bo
 export async function pair(place: HTMLElement): Promise<void> {
   for (;;) {
     const { status, body } = await call('POST', '/api/pairing', { raster: rasterNow() });
-    const asked = askedSchema.safeParse(body);
+    const asked = pairingSchema.safeParse(body);
     if (status !== 201 || !asked.success) {
       showAway(place);
       await wait(awayMs);
