@@ -135,8 +135,10 @@ export function createHub(options: HubOptions): Hub {
     if (!who) return turnAway(socket, 401, 'Not signed in.');
     const refused = whyNot(who, query.data);
     if (refused) return turnAway(socket, 403, refused);
-    const show = await options.loadShow(query.data.show);
-    if (!show || (who.kind === 'crew' && who.crewId !== show.crewId))
+    // An open room knows whose it is: a crowd that comes back at once does not read the whole show once each.
+    const known = open.get(`${query.data.show}/${query.data.room}`);
+    const crewId = known?.crewId ?? (await options.loadShow(query.data.show))?.crewId;
+    if (!crewId || (who.kind === 'crew' && who.crewId !== crewId))
       return turnAway(socket, 404, 'There is no such show.');
     const room = await roomOf(query.data.show, query.data.room);
     if (closing || revoked !== before) return turnAway(socket, 503, 'Ask once more.');

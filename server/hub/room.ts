@@ -52,6 +52,8 @@ export class Room {
   private readonly displays: RoomDisplays;
   private show: HubShow;
   private scenes: ReadonlyMap<string, KnownScene> = new Map();
+  private screens: ReadonlySet<string> = new Set();
+  private phases: ReadonlySet<string> = new Set();
   private sinceSnapshot = 0;
   private readonly timers = new Map<string, ReturnType<typeof setTimeout>>();
   private readonly seenAt = new Map<string, number>();
@@ -68,16 +70,24 @@ export class Room {
       parts.opened.wall,
     );
     for (const id of parts.opened.commandIds) this.answers.set(id, { landsAt: null, kept: true });
-    this.readScenes();
+    this.readShow();
   }
 
-  private readScenes(): void {
+  /** Looks up once what every command asks for. */
+  private readShow(): void {
+    this.screens = new Set(this.show.manifest.screens.map(({ id }) => id));
+    this.phases = new Set(this.show.phaseIds);
     this.scenes = new Map(
       this.show.manifest.scenes.map(({ id, version, body }) => [
         id,
         { version, transition: body.transition, dials: body.dials.map(({ value }) => value) },
       ]),
     );
+  }
+
+  /** Whose show it is. */
+  get crewId(): string {
+    return this.show.crewId;
   }
 
   /** Takes a seat that has said hello. */
@@ -162,8 +172,8 @@ export class Room {
       principal: seat.principal,
       mode: this.show.mode,
       scenes: this.scenes,
-      screens: new Set(this.show.manifest.screens.map(({ id }) => id)),
-      phases: new Set(this.show.phaseIds),
+      screens: this.screens,
+      phases: this.phases,
       displays: new Set(this.displays.statuses().map(({ displayId }) => displayId)),
       makeRun: () => ({ runId: randomBytes(9).toString('base64url'), seed: randomInt(2 ** 31) }),
     };
@@ -286,11 +296,11 @@ export class Room {
       if (seat.who.kind === 'display') this.noteSeen(displayId, message.vitals.raster, now);
       this.later('displays', statusMs, () => this.tellDisplays());
     } else if (message.type === 'picture') {
-      if (!this.hasScreen(message.picture.screenId)) return;
+      if (!this.screens.has(message.picture.screenId)) return;
       if (this.displays.picture(message.picture, now)) this.toCrew(message);
     } else {
       const { showId, room, store, log } = this.parts;
-      const rows = this.displays.drawn(message.drawn, showId, room, (id) => this.hasScreen(id));
+      const rows = this.displays.drawn(message.drawn, showId, room, (id) => this.screens.has(id));
       this.later('wall', wallMs, () => this.toCrew({ type: 'wall', wall: this.displays.wall() }));
       const seq = Math.max(...rows.map((row) => row.seq));
       const logged = () => seat.send({ type: 'logged', displayId, seq });
@@ -299,10 +309,6 @@ export class Room {
       // Unanswered reports are sent again by the display: nothing is lost while the database is away.
       store.drawn(rows).then(logged, (error: unknown) => log.warn({ err: error }, 'drawn reports wait'));
     }
-  }
-
-  private hasScreen(screenId: string): boolean {
-    return this.show.manifest.screens.some(({ id }) => id === screenId);
   }
 
   private noteSeen(displayId: string, raster: readonly [number, number], now: number): void {
@@ -337,7 +343,7 @@ export class Room {
   refresh(show: HubShow): void {
     const before = this.show;
     this.show = show;
-    this.readScenes();
+    this.readShow();
     if (before.manifest.revision !== show.manifest.revision)
       this.broadcast({ type: 'manifest', manifest: show.manifest });
     if (before.mode !== show.mode) this.broadcast({ type: 'mode', mode: show.mode });
