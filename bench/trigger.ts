@@ -1,11 +1,12 @@
 import { type BrowserContext, chromium } from 'playwright';
 import { WebSocket } from 'ws';
 import { type House, startHouse } from '../e2e/support/house';
-import { makeNight, makeScene, twoScreens } from '../e2e/support/night';
+import { type Call, makeNight, makeScene, mapWhole, twoScreens } from '../e2e/support/night';
 import { ensureBuilt } from '../server/cli/build.mjs';
 import { protocolVersion } from '../shared/protocol/constants';
 import type { FromHub } from '../shared/protocol/messages';
 import { newBody } from '../shared/scene/defaults';
+import { callOf } from './support/callOf';
 
 /*
  * From a press to the first drawn frame on real display pages: n pages in one Chromium, a real hub, a real PostgreSQL.
@@ -16,24 +17,6 @@ const triggers = 100;
 /** The hub's lead goes by the last twenty seconds: those in which the pages loaded say nothing of the night. */
 const settleMs = 21_000;
 const raster = { width: 320, height: 180 } as const;
-
-type Call = <T>(
-  method: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE',
-  path: string,
-  data?: unknown,
-) => Promise<T>;
-
-const callOf =
-  (lead: BrowserContext, { address }: House): Call =>
-  async (method, path, data) => {
-    const answer = await lead.request.fetch(`${address}${path}`, {
-      method,
-      headers: { origin: address },
-      data,
-    });
-    if (!answer.ok()) throw new Error(`${method} ${path}: ${await answer.text()}`);
-    return answer.status() === 204 ? (undefined as never) : answer.json();
-  };
 
 /** Opens a display page and joins it, with the first screen over its whole raster. */
 async function join(
@@ -50,22 +33,7 @@ async function join(
   await page.goto(`${house.address}/display`);
   const { code } = (await (await asked).json()) as { code: string };
   const { id } = await call<{ id: string }>('POST', '/api/displays/join', { code, showId, name });
-  const { width: w, height: h } = raster;
-  const corners = [
-    [0, 0],
-    [w, 0],
-    [w, h],
-    [0, h],
-  ];
-  const region = {
-    id: 'r',
-    screenId: twoScreens[0]?.id,
-    name,
-    source: { x: 0, y: 0, w: 1, h: 1 },
-    corners,
-    brightness: 1,
-  };
-  await call('POST', `/api/displays/${id}/maps`, { map: { raster: [w, h], regions: [region] }, note: '' });
+  await mapWhole(call, id, [raster.width, raster.height]);
 }
 
 /** A socket of the lead's that hears what the hub says. */

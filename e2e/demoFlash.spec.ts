@@ -79,21 +79,10 @@ for (const bpm of [85, 128, 175])
       const lights = await page.evaluate(
         async ({ frames, width, height }) => {
           const { canvas, stage } = stagePage.open(width, height);
-          const lit = (value: number) =>
-            value <= 0.04045 ? value / 12.92 : ((value + 0.055) / 1.055) ** 2.4;
-          const table = Array.from({ length: 256 }, (_, i) => lit(i / 255));
           const all: number[][] = [];
           for (const frame of frames) {
             const data = await stagePage.drawn(stage, canvas, stagePage.input(width, height, [frame]));
-            all.push(
-              Array.from(
-                { length: width * height },
-                (_, p) =>
-                  0.2126 * (table[data[p * 4] ?? 0] ?? 0) +
-                  0.7152 * (table[data[p * 4 + 1] ?? 0] ?? 0) +
-                  0.0722 * (table[data[p * 4 + 2] ?? 0] ?? 0),
-              ),
-            );
+            all.push(stagePage.luminances(data));
           }
           stage.dispose();
           return all;

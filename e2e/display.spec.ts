@@ -1,39 +1,13 @@
 import type { Page } from '@playwright/test';
 import type { ShowDetail } from '../shared/api/shows';
 import { newBody } from '../shared/scene/defaults';
-import { drawingBody, makeNight, makeScene, twoScreens } from './support/night';
+import { drawingBody, makeNight, makeScene, mapWhole } from './support/night';
 import { expectColour } from './support/pixels';
 import { expect, type JoinedDisplay, test } from './support/test';
-
-type Call = <T>(method: 'GET' | 'POST' | 'DELETE', path: string, data?: unknown) => Promise<T>;
 
 const middle = [320, 180] as const;
 const paper = [0xe0, 0xe0, 0xe0] as const;
 const black = [0, 0, 0] as const;
-
-/** Puts the first screen over the whole raster of a display. */
-const mapWhole = (call: Call, displayId: string) =>
-  call('POST', `/api/displays/${displayId}/maps`, {
-    map: {
-      raster: [640, 360],
-      regions: [
-        {
-          id: 'r1',
-          screenId: twoScreens[0]?.id,
-          name: 'wall',
-          source: { x: 0, y: 0, w: 1, h: 1 },
-          corners: [
-            [0, 0],
-            [640, 0],
-            [640, 360],
-            [0, 360],
-          ],
-          brightness: 1,
-        },
-      ],
-    },
-    note: 'whole',
-  });
 
 /** Fires a scene as the crew does, and waits until a display shows its colour. */
 async function fire(crew: Page, house: string, show: ShowDetail, name: string): Promise<void> {
@@ -100,7 +74,7 @@ test('a display reloaded while the hub is dead goes on with its picture, and fol
   const show = await makeNight(call);
   await makeScene(call, show, 'Paper', flat);
   const { page, displayId }: JoinedDisplay = await joinDisplay(show.id, 'House left');
-  await mapWhole(call, displayId);
+  await mapWhole(call, displayId, [640, 360]);
   await fire(signedIn, house.address, show, 'Paper');
   await expectColour(page, middle, paper);
   await expect.poll(() => isKept(page), { timeout: 20_000 }).toBe(true);
@@ -130,7 +104,7 @@ test('a display says that it stands still while the show does, and not while the
   await makeScene(call, show, 'Paper', flat);
   await makeScene(call, show, 'Low tide', drawingBody('tide'));
   const { page, displayId } = await joinDisplay(show.id, 'House left');
-  await mapWhole(call, displayId);
+  await mapWhole(call, displayId, [640, 360]);
   await expect(page.locator('html')).toHaveAttribute('data-still', 'true', { timeout: 20_000 });
   await fire(signedIn, house.address, show, 'Low tide');
   await expect(page.locator('html')).toHaveAttribute('data-still', 'false', { timeout: 20_000 });
@@ -149,7 +123,7 @@ test('a display whose graphics card is lost for good loads itself anew', async (
   const show = await makeNight(call);
   await makeScene(call, show, 'Paper', flat);
   const { page, displayId } = await joinDisplay(show.id, 'House left');
-  await mapWhole(call, displayId);
+  await mapWhole(call, displayId, [640, 360]);
   await fire(signedIn, house.address, show, 'Paper');
   await expectColour(page, middle, paper);
   const loaded = page.waitForEvent('load', { timeout: 60_000 });

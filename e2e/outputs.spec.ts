@@ -1,28 +1,6 @@
-import { drawingBody, makeNight, makeScene, twoScreens } from './support/night';
+import { drawingBody, makeNight, makeScene, mapWhole } from './support/night';
 import { expectColour, readPage } from './support/pixels';
 import { expect, test } from './support/test';
-
-const whole = (screenId: string) => ({
-  map: {
-    raster: [640, 360],
-    regions: [
-      {
-        id: 'r1',
-        screenId,
-        name: 'wall',
-        source: { x: 0, y: 0, w: 1, h: 1 },
-        corners: [
-          [0, 0],
-          [640, 0],
-          [640, 360],
-          [0, 360],
-        ],
-        brightness: 1,
-      },
-    ],
-  },
-  note: 'whole',
-});
 
 test('a region is added, moved by keys while the display follows, saved, and an older version comes back', async ({
   signedIn,
@@ -39,7 +17,7 @@ test('a region is added, moved by keys while the display follows, saved, and an 
     ground: '#e0e0e0',
   });
   const { page: display, displayId } = await joinDisplay(show.id, 'House left', { width: 640, height: 360 });
-  await call('POST', `/api/displays/${displayId}/maps`, whole(twoScreens[0]?.id ?? ''));
+  await mapWhole(call, displayId, [640, 360]);
   await signedIn.setViewportSize({ width: 1440, height: 900 });
   await signedIn.goto(`${house.address}/shows/${show.id}/live`);
   await signedIn
@@ -107,7 +85,7 @@ test('a rehearsal draws the room and reaches no real display', async ({
     ground: '#e0e0e0',
   });
   const { page: display, displayId } = await joinDisplay(show.id, 'House left', { width: 640, height: 360 });
-  await call('POST', `/api/displays/${displayId}/maps`, whole(twoScreens[0]?.id ?? ''));
+  await mapWhole(call, displayId, [640, 360]);
   await signedIn.goto(`${house.address}/shows/${show.id}/rehearsal`);
   const phone = await page.context().newPage();
   await phone.setViewportSize({ width: 390, height: 844 });

@@ -35,9 +35,6 @@ for (const bpm of [85, 128, 175])
         async ({ name, bpm, width, height, count, framesASecond }) => {
           const { canvas, stage } = stagePage.open(width, height);
           const all: number[][] = [];
-          const lit = (value: number) =>
-            value <= 0.04045 ? value / 12.92 : ((value + 0.055) / 1.055) ** 2.4;
-          const table = Array.from({ length: 256 }, (_, i) => lit(i / 255));
           for (let i = 0; i < count; i += 1) {
             const item = stagePage.drawing(name, ((i / framesASecond) * bpm) / 60 + 8, bpm);
             if (item.source.kind === 'drawing') Object.assign(item.source, { a: 1, b: 1 });
@@ -46,15 +43,7 @@ for (const bpm of [85, 128, 175])
               canvas,
               stagePage.input(width, height, [stagePage.frame(stagePage.list([item]))]),
             );
-            all.push(
-              Array.from(
-                { length: width * height },
-                (_, p) =>
-                  0.2126 * (table[data[p * 4] ?? 0] ?? 0) +
-                  0.7152 * (table[data[p * 4 + 1] ?? 0] ?? 0) +
-                  0.0722 * (table[data[p * 4 + 2] ?? 0] ?? 0),
-              ),
-            );
+            all.push(stagePage.luminances(data));
           }
           stage.dispose();
           return all;

@@ -1,10 +1,12 @@
 import { type Browser, type BrowserContext, chromium, type Page } from 'playwright';
 import { type House, startHouse } from '../../e2e/support/house';
+import type { Call } from '../../e2e/support/night';
 import { ensureBuilt } from '../../server/cli/build.mjs';
 import type { DemoProgress } from '../../shared/api/demo';
 import type { ShowDetail } from '../../shared/api/shows';
 import type { OutputMap } from '../../shared/mapping/schema';
 import type { Scene } from '../../shared/scene/schema';
+import { callOf } from './callOf';
 
 const password = 'four otters on a raft';
 
@@ -22,20 +24,6 @@ export interface OpenHouse {
   open: (path: string, size: [number, number]) => Promise<Page>;
   close: () => Promise<void>;
 }
-
-type Call = <T>(method: 'GET' | 'POST', path: string, data?: unknown) => Promise<T>;
-
-const callOf =
-  (lead: BrowserContext, { address }: House): Call =>
-  async (method, path, data) => {
-    const answer = await lead.request.fetch(`${address}${path}`, {
-      method,
-      headers: { origin: address },
-      data,
-    });
-    if (!answer.ok()) throw new Error(`${method} ${path}: ${await answer.text()}`);
-    return answer.json();
-  };
 
 /** Waits until the demo night is whole, and says how long that took in seconds. */
 async function waitForDemo(call: Call): Promise<{ showId: string; seconds: number }> {

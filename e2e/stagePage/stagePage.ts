@@ -1,4 +1,4 @@
-import type { OutputMap } from '#shared/mapping/schema';
+import { wholeMap } from '#shared/mapping/rectangle';
 import { rgbOf } from '#shared/scene/colour';
 import { drawingFacts } from '#shared/scene/drawingFacts';
 import type { DrawItem, DrawList, DrawSource, Rgb, ScreenFrame } from '#shared/scene/drawingList';
@@ -66,25 +66,6 @@ const frame = (over: DrawList, more: Partial<ScreenFrame> = {}): ScreenFrame => 
 
 const list = (items: DrawItem[], ground: Rgb = [0, 0, 0]): DrawList => ({ ground, items });
 
-const wholeMap = (width: number, height: number): OutputMap => ({
-  raster: [width, height],
-  regions: [
-    {
-      id: 'whole',
-      screenId: 'wall',
-      name: 'Wall',
-      source: { x: 0, y: 0, w: 1, h: 1 },
-      corners: [
-        [0, 0],
-        [width, 0],
-        [width, height],
-        [0, height],
-      ],
-      brightness: 1,
-    },
-  ],
-});
-
 const input = (
   width: number,
   height: number,
@@ -92,7 +73,7 @@ const input = (
   more: Partial<StageInput> = {},
 ): StageInput => ({
   frames,
-  map: wholeMap(width, height),
+  map: wholeMap('wall', [width, height]),
   screenSizes: { wall: { width, height } },
   hubNow: 0,
   paused: false,
@@ -109,6 +90,19 @@ const pixels = (canvas: HTMLCanvasElement): Uint8ClampedArray => {
   if (!context) throw new Error('The browser gives no 2D canvas.');
   context.drawImage(canvas, 0, 0);
   return context.getImageData(0, 0, copy.width, copy.height).data;
+};
+
+const lit = Array.from({ length: 256 }, (_, i) => i / 255).map((value) =>
+  value <= 0.04045 ? value / 12.92 : ((value + 0.055) / 1.055) ** 2.4,
+);
+
+/** Relative luminance of each point of a drawn picture, 0..1 (WCAG 2.2, definition of “relative luminance”). */
+const luminances = (data: Uint8ClampedArray): number[] => {
+  const part = (at: number): number => lit[data[at] ?? 0] ?? 0;
+  return Array.from(
+    { length: data.length / 4 },
+    (_, p) => 0.2126 * part(p * 4) + 0.7152 * part(p * 4 + 1) + 0.0722 * part(p * 4 + 2),
+  );
 };
 
 /** Draws until something is to be seen (the renderer starts in its own time), then gives the pixels. */
@@ -144,8 +138,8 @@ export const stagePage = {
   frame,
   list,
   input,
-  wholeMap,
   pixels,
+  luminances,
   drawn,
   columns,
   createFileStore,

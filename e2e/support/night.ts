@@ -1,10 +1,11 @@
-import type { Asset } from '../../shared/api/assets';
 import type { Show, ShowDetail } from '../../shared/api/shows';
+import { wholeMap } from '../../shared/mapping/rectangle';
 import { drawingSource, newBody, newLayer } from '../../shared/scene/defaults';
 import type { Scene, SceneBody } from '../../shared/scene/schema';
 import type { Screen } from '../../shared/venue/schema';
 
-type Call = <T>(
+/** Sends a JSON request as the lead; fails when it is refused. */
+export type Call = <T>(
   method: 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE',
   path: string,
   data?: unknown,
@@ -47,7 +48,8 @@ export function makeScene(call: Call, show: ShowDetail, name: string, body: Scen
   return call<Scene>('POST', `/api/shows/${show.id}/scenes`, { name, phaseId, energy: 5, body });
 }
 
-/** Assets of the crew once none is being worked on. */
-export async function readyAssets(call: Call): Promise<Asset[]> {
-  return call<Asset[]>('GET', '/api/assets');
+/** Puts the first screen over the whole raster of a display. */
+export function mapWhole(call: Call, displayId: string, raster: [number, number]): Promise<unknown> {
+  const map = wholeMap(twoScreens[0]?.id ?? '', raster);
+  return call('POST', `/api/displays/${displayId}/maps`, { map, note: 'whole' });
 }

@@ -1,5 +1,5 @@
 import type { Phase } from '#shared/api/shows';
-import type { DisplayStatus, Manifest } from '#shared/protocol/messages';
+import type { DisplayStatus, Manifest, Vitals } from '#shared/protocol/messages';
 import type { DrawingName, Scene } from '#shared/scene/schema';
 import type { Screen, ScreenGroup } from '#shared/venue/schema';
 
@@ -88,6 +88,26 @@ export const makeDisplay = (displayId: string, connected = true): DisplayStatus 
   vitals: null,
   changedAt: null,
   simulated: false,
+});
+
+/** Vitals of a display that does well. */
+export const makeVitals = (displayId: string, change: Partial<Vitals> = {}): Vitals => ({
+  displayId,
+  fps: 60,
+  longestMs: 17,
+  clockErrorMs: 1,
+  linkMs: 4,
+  filesOnBoard: 0,
+  filesWanted: 0,
+  raster: [1280, 720],
+  visible: true,
+  fullscreen: true,
+  awake: true,
+  still: false,
+  changes: 0,
+  upS: 1,
+  trouble: null,
+  ...change,
 });
 
 /** A small night: three screens in one group of two, Peak and Comedown, three scenes. */

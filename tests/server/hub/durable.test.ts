@@ -1,10 +1,9 @@
 import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import type { HubStore } from '#server/services/hubStore';
-import { makeHubStore } from '#server/services/hubStore';
 import type { CommandBody } from '#shared/show/commands';
 import { makeHubHouse } from '#tests/make/hub';
+import { houseWithStore } from '#tests/make/hubStore';
 
 const fire = (sceneId: string): CommandBody => ({
   kind: 'scene.trigger',
@@ -58,21 +57,9 @@ describe('a hub that is killed', () => {
 describe('while the database is away', () => {
   it('events go to a file, are said to be kept, and are in the database once it is back', async () => {
     let away = false;
-    let store: HubStore | null = null;
-    const house = await makeHubHouse({
-      store: {
-        open: (...facts) => real().open(...facts),
-        append: (rows) => (away ? Promise.reject(new Error('ECONNREFUSED')) : real().append(rows)),
-        snapshot: (state) => real().snapshot(state),
-        drawn: (rows) => real().drawn(rows),
-        seen: (...facts) => real().seen(...facts),
-        close: () => real().close(),
-      },
-    });
-    function real(): HubStore {
-      store ??= makeHubStore(house.db, house.databaseUrl);
-      return store;
-    }
+    const { house } = await houseWithStore((real) => ({
+      append: (rows) => (away ? Promise.reject(new Error('ECONNREFUSED')) : real().append(rows)),
+    }));
     const phone = await house.open(house.lead);
     await phone.join();
     away = true;
@@ -108,21 +95,10 @@ describe('while the database is away', () => {
 
   it('a hub that dies with events in its file brings them into the database when it starts', async () => {
     let away = true;
-    let store: HubStore | null = null;
-    const house = await makeHubHouse({
-      store: {
-        open: (...facts) => real().open(...facts),
-        append: (rows) => (away ? Promise.reject(new Error('ECONNREFUSED')) : real().append(rows)),
-        snapshot: (state) => real().snapshot(state),
-        drawn: (rows) => real().drawn(rows),
-        seen: (...facts) => real().seen(...facts),
-        close: async () => undefined,
-      },
-    });
-    function real(): HubStore {
-      store ??= makeHubStore(house.db, house.databaseUrl);
-      return store;
-    }
+    const { house, real } = await houseWithStore((store) => ({
+      append: (rows) => (away ? Promise.reject(new Error('ECONNREFUSED')) : store().append(rows)),
+      close: async () => undefined,
+    }));
     const phone = await house.open(house.lead);
     await phone.join();
     phone.command('a', { kind: 'dimmer.set', level: 0.125 });

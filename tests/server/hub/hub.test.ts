@@ -1,10 +1,11 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { hubLimits } from '#server/hub/limits';
 import { closeCodes, protocolVersion } from '#shared/protocol/constants';
-import type { Drawn, Vitals } from '#shared/protocol/messages';
+import type { Drawn } from '#shared/protocol/messages';
 import type { CommandBody } from '#shared/show/commands';
 import { leadLimits } from '#shared/show/landing';
 import { type HubHouse, makeHubHouse } from '#tests/make/hub';
+import { makeVitals } from '#tests/make/night';
 
 let house: HubHouse;
 beforeAll(async () => {
@@ -24,23 +25,7 @@ const fire = (screenIds = ['back']): CommandBody => ({
   sceneId: house.sceneId,
   landsOn: 'now',
 });
-const vitals = (displayId: string, changes = 0): Vitals => ({
-  displayId,
-  fps: 60,
-  longestMs: 17,
-  clockErrorMs: 1,
-  linkMs: 4,
-  filesOnBoard: 0,
-  filesWanted: 0,
-  raster: [1280, 720],
-  visible: true,
-  fullscreen: true,
-  awake: true,
-  still: false,
-  changes,
-  upS: 1,
-  trouble: null,
-});
+const vitals = (displayId: string, changes = 0) => makeVitals(displayId, { changes });
 const drawn = (displayId: string, seq: number, runId: string, at = 1e12): Drawn => ({
   displayId,
   screenId: 'back',

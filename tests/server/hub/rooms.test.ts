@@ -1,9 +1,9 @@
 import { afterEach, describe, expect, it } from 'vitest';
-import { type HubStore, makeHubStore } from '#server/services/hubStore';
 import { showManifest } from '#server/services/manifest';
 import { closeCodes } from '#shared/protocol/constants';
-import type { Vitals } from '#shared/protocol/messages';
 import { type HubHouse, makeHubHouse } from '#tests/make/hub';
+import { houseWithStore } from '#tests/make/hubStore';
+import { makeVitals } from '#tests/make/night';
 
 let house: HubHouse | null = null;
 afterEach(async () => {
@@ -11,47 +11,14 @@ afterEach(async () => {
   house = null;
 });
 
-/** A house whose store does some things differently. */
-const houseWith = async (change: (real: () => HubStore) => Partial<HubStore>): Promise<HubHouse> => {
-  let store: HubStore | null = null;
-  const real = () => {
-    if (!made) throw new Error('The house is not there yet.');
-    store ??= makeHubStore(made.db, made.databaseUrl);
-    return store;
-  };
-  let made: HubHouse | null = null;
-  made = await makeHubHouse({
-    store: {
-      open: (...facts) => real().open(...facts),
-      append: (rows) => real().append(rows),
-      snapshot: (state) => real().snapshot(state),
-      drawn: (rows) => real().drawn(rows),
-      seen: (...facts) => real().seen(...facts),
-      close: () => real().close(),
-      ...change(real),
-    },
-  });
+/** A house whose store does some things differently; closed after the test. */
+const houseWith = async (change: Parameters<typeof houseWithStore>[0]): Promise<HubHouse> => {
+  const made = (await houseWithStore(change)).house;
   house = made;
   return made;
 };
 
-const vitals: Vitals = {
-  displayId: 'sim-back',
-  fps: 60,
-  longestMs: 17,
-  clockErrorMs: 1,
-  linkMs: 4,
-  filesOnBoard: 0,
-  filesWanted: 0,
-  raster: [1280, 720],
-  visible: true,
-  fullscreen: true,
-  awake: true,
-  still: false,
-  changes: 0,
-  upS: 1,
-  trouble: null,
-};
+const vitals = makeVitals('sim-back');
 
 describe('a room', () => {
   it('that is still being opened holds up no other room’s heartbeat', async () => {
